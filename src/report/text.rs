@@ -1,0 +1,184 @@
+//! A document as plain text, 80 columns, with or without colour.
+
+use super::document::{Block, Document, Line, Span, Tone};
+use owo_colors::OwoColorize;
+use unicode_width::UnicodeWidthStr;
+
+/// How the text is to look.
+#[derive(Debug, Clone, Copy, PartialEq, Eq)]
+pub struct Look {
+    /// Colour and weight.
+    pub color: bool,
+    /// Only ASCII characters.
+    pub ascii: bool,
+    /// Columns.
+    pub width: usize,
+}
+
+impl Default for Look {
+    fn default() -> Self {
+        Self { color: false, ascii: false, width: 80 }
+    }
+}
+
+/// The document as text.
+#[must_use]
+pub fn text(document: &Document, look: Look) -> String {
+    let mut out = String::new();
+    for (at, block) in document.blocks.iter().enumerate() {
+        if at > 0 {
+            out.push('\n');
+        }
+        render(&mut out, block, look);
+    }
+    if look.ascii { ascii(&out) } else { out }
+}
+
+fn render(out: &mut String, block: &Block, look: Look) {
+    match block {
+        Block::Title(line) => {
+            let text = line.text();
+            push_wrapped(out, line, look, 0, true);
+            let rule = if look.ascii { "=" } else { "═" };
+            out.push_str(&rule.repeat(text.width().min(look.width)));
+            out.push('\n');
+        }
+        Block::Heading(line) => push_wrapped(out, line, look, 0, true),
+        Block::Text(line) => push_wrapped(out, line, look, 2, false),
+        Block::Pairs(pairs) => {
+            let name_width = pairs.iter().map(|(name, _)| name.width()).max().unwrap_or(0);
+            for (name, line) in pairs {
+                let indent = 2 + name_width + 2;
+                out.push_str("  ");
+                out.push_str(name);
+                out.push_str(&" ".repeat(name_width - name.width() + 2));
+                push_wrapped_from(out, line, look, indent, indent, false);
+            }
+        }
+        Block::Table { head, rows } => table(out, head, rows, look),
+        Block::List(lines) => {
+            for line in lines {
+                out.push_str("  - ");
+                push_wrapped_from(out, line, look, 4, 4, false);
+            }
+        }
+    }
+}
+
+fn table(out: &mut String, head: &[String], rows: &[Vec<Line>], look: Look) {
+    let texts: Vec<Vec<String>> =
+        rows.iter().map(|row| row.iter().map(Line::text).collect()).collect();
+    let widths: Vec<usize> = head
+        .iter()
+        .enumerate()
+        .map(|(column, name)| {
+            let cells = texts.iter().filter_map(|row| row.get(column)).map(|cell| cell.width());
+            cells.chain([name.width()]).max().unwrap_or(0)
+        })
+        .collect();
+    let mut put = |cells: &[String], tone: Tone| {
+        let mut row = String::from(" ");
+        for (column, (cell, width)) in cells.iter().zip(&widths).enumerate() {
+            let space = " ".repeat(width.saturating_sub(cell.width()));
+            row.push(' ');
+            // Words to the left, figures to the right.
+            if column == 0 {
+                row.push_str(cell);
+                row.push_str(&space);
+            } else {
+                row.push_str(&space);
+                row.push_str(cell);
+            }
+            row.push(' ');
+        }
+        out.push_str(&styled(row.trim_end(), tone, look));
+        out.push('\n');
+    };
+    put(head, Tone::Faint);
+    for row in &texts {
+        put(row, Tone::Plain);
+    }
+}
+
+fn push_wrapped(out: &mut String, line: &Line, look: Look, indent: usize, strong: bool) {
+    out.push_str(&" ".repeat(indent));
+    push_wrapped_from(out, line, look, indent, indent, strong);
+}
+
+/// Words of a line, wrapped; `column` is where the pen already stands.
+fn push_wrapped_from(
+    out: &mut String,
+    line: &Line,
+    look: Look,
+    mut column: usize,
+    indent: usize,
+    strong: bool,
+) {
+    let mut first = true;
+    let mut glue = false;
+    for Span { text, tone, .. } in &line.0 {
+        let tone = if strong { Tone::Strong } else { *tone };
+        let mut pieces = text.split(' ').peekable();
+        let mut leading = true;
+        while let Some(word) = pieces.next() {
+            let spaced = !leading || !glue;
+            leading = false;
+            if word.is_empty() {
+                glue = false;
+                continue;
+            }
+            let space = usize::from(spaced && !first);
+            if column + space + word.width() > look.width && column > indent && space == 1 {
+                out.push('\n');
+                out.push_str(&" ".repeat(indent));
+                column = indent;
+            } else if space == 1 {
+                out.push(' ');
+                column += 1;
+            }
+            out.push_str(&styled(word, tone, look));
+            column += word.width();
+            first = false;
+            glue = pieces.peek().is_none();
+        }
+    }
+    out.push('\n');
+}
+
+fn styled(text: &str, tone: Tone, look: Look) -> String {
+    match tone {
+        Tone::Strong if look.color => text.bold().to_string(),
+        Tone::Faint if look.color => text.dimmed().to_string(),
+        _ => text.to_owned(),
+    }
+}
+
+/// The same in ASCII: units and signs as they are typed on any keyboard.
+#[must_use]
+pub fn ascii(text: &str) -> String {
+    let mut out = String::with_capacity(text.len());
+    for c in text.chars() {
+        match c {
+            '°' => out.push_str("deg "),
+            '²' => out.push('2'),
+            '³' => out.push('3'),
+            '·' => out.push('.'),
+            '×' => out.push('x'),
+            '−' | '–' | '—' => out.push('-'),
+            '±' => out.push_str("+/-"),
+            '≤' => out.push_str("<="),
+            '≥' => out.push_str(">="),
+            '…' => out.push_str("..."),
+            '═' => out.push('='),
+            'µ' | 'μ' => out.push('u'),
+            '√' => out.push_str("sqrt "),
+            'ν' => out.push_str("nu"),
+            'ρ' => out.push_str("rho"),
+            'α' => out.push_str("alpha"),
+            'Δ' => out.push_str("d"),
+            c if c.is_ascii() => out.push(c),
+            _ => out.push('?'),
+        }
+    }
+    out.replace("deg C", "degC").replace("deg F", "degF")
+}
