@@ -3,7 +3,7 @@
 //! Invariant: this is the only place where an assumption is born.
 
 use super::clock::Clock;
-use super::fault::{Fault, Faults, Place};
+use super::fault::{Fault, Faults};
 use super::file::CaseFile;
 use super::keys::{self, KeyKind};
 use super::model::{
@@ -12,7 +12,7 @@ use super::model::{
 };
 use super::policy::Policy;
 use crate::oil::{Base, Class, Oil, OilData, saybolt};
-use crate::pump::{Fitting, KindLimits, Neutral, PumpKind, Strainer, SuctionLine};
+use crate::pump::{Fitting, Neutral, PumpKind, Strainer, SuctionLine};
 use crate::quantity::{
     AbsolutePressure, Density, KinematicViscosity, Power, Quantity, Temperature, ViscosityReading,
     shown,
@@ -25,7 +25,8 @@ impl CaseFile {
     /// Everything that is wrong, at once: unknown keys, values that cannot be read, required keys
     /// that are missing, contradictions.
     pub fn check(&self) -> Result<Case, Faults> {
-        let mut desk = Desk { file: self, faults: Vec::new(), assumptions: Vec::new(), inputs: Vec::new() };
+        let mut desk =
+            Desk { file: self, faults: Vec::new(), assumptions: Vec::new(), inputs: Vec::new() };
         let case = desk.case();
         match case {
             Some(case) if desk.faults.is_empty() && self.faults.is_empty() => Ok(case),
@@ -173,7 +174,10 @@ impl Desk<'_> {
                 .max_by(|a, b| a.0.total_cmp(&b.0))
                 .filter(|(likeness, _)| *likeness > 0.75);
             Err(match near {
-                Some((_, word)) => format!("`{text}` is unknown; did you mean `{word}`? (one of {})", words.join(", ")),
+                Some((_, word)) => format!(
+                    "`{text}` is unknown; did you mean `{word}`? (one of {})",
+                    words.join(", ")
+                ),
                 None => format!("`{text}` is unknown; write one of {}", words.join(", ")),
             })
         })
@@ -363,7 +367,7 @@ impl Desk<'_> {
         let work_speed = self.or_typical("pump.work_speed", 2000.0, TRADE);
         let inlet_work_assumed = self.file.text("pump.inlet_pressure_work_min").is_none();
         // Without a kind the limits given are still read, so that their faults are told.
-        let limits: &KindLimits = kind.unwrap_or(PumpKind::AxialPiston).limits();
+        let limits = kind.unwrap_or(PumpKind::AxialPiston).limits()?;
         let viscosity_start_max =
             self.viscosity_or("pump.viscosity_start_max", limits.viscosity_start_max.typical);
         let viscosity_work_max =
@@ -415,12 +419,10 @@ impl Desk<'_> {
         if let Some(length) = length {
             self.positive("suction.length", length);
         }
-        SuctionLine::new(bore?, length?, oil_above?, &fittings, strainer, &policy.inlet)
-            .map_err(|error| self.fault("suction.bore", error.to_string()))
-            .ok()
+        Some(SuctionLine::new(bore?, length?, oil_above?, &fittings, strainer, &policy.inlet))
     }
 
-    fn fittings(&mut self) -> Vec<(Fitting, u32)> {
+    fn fittings(&mut self) -> Vec<(&'static Fitting, u32)> {
         let rows: Vec<(String, String)> = self
             .file
             .below("suction.fittings")
@@ -430,8 +432,8 @@ impl Desk<'_> {
         for (name, count) in rows {
             let key = format!("suction.fittings.{name}");
             self.note(&key, &count, From::Given);
-            let Ok(fitting) = name.trim_matches('"').parse::<Fitting>() else {
-                let known: Vec<&str> = Fitting::ALL.iter().map(|fitting| fitting.id()).collect();
+            let Some(fitting) = Fitting::named(name.trim_matches('"')) else {
+                let known: Vec<&str> = Fitting::all().iter().map(Fitting::id).collect();
                 let near = known
                     .iter()
                     .map(|id| (strsim::jaro_winkler(&name, id), id))
@@ -446,7 +448,9 @@ impl Desk<'_> {
             };
             match count.parse::<u32>() {
                 Ok(count) if count <= 50 => fittings.push((fitting, count)),
-                _ => self.fault(&key, format!("takes a whole number from 0 to 50, but is `{count}`")),
+                _ => {
+                    self.fault(&key, format!("takes a whole number from 0 to 50, but is `{count}`"))
+                }
             }
         }
         fittings
@@ -518,13 +522,15 @@ impl Desk<'_> {
         let exposure = self
             .word_or("reservoir.exposure", "enclosed", JUDGEMENT)
             .and_then(|word| word.parse().ok());
-        let flat_surface =
-            self.or_typical("reservoir.flat_surface", 0.25 * area, JUDGEMENT);
-        let thickness =
-            self.given::<crate::quantity::Thickness>("reservoir.insulation.thickness");
+        let flat_surface = self.or_typical("reservoir.flat_surface", 0.25 * area, JUDGEMENT);
+        let thickness = self.given::<crate::quantity::Thickness>("reservoir.insulation.thickness");
         let insulation = match thickness {
             Some(thickness) if thickness.as_mm() > 0.0 => self
-                .or_typical("reservoir.insulation.conductivity", 0.040, "mineral wool or foam, common practice")
+                .or_typical(
+                    "reservoir.insulation.conductivity",
+                    0.040,
+                    "mineral wool or foam, common practice",
+                )
                 .map(|conductivity| (thickness, conductivity)),
             _ => {
                 if thickness.is_none()
@@ -579,7 +585,9 @@ impl Desk<'_> {
         if !(from > to && to > air) {
             self.fault(
                 "reservoir.cooldown.to",
-                format!("must lie between the air ({air}) and the first reading ({from}), but is {to}"),
+                format!(
+                    "must lie between the air ({air}) and the first reading ({from}), but is {to}"
+                ),
             );
         }
         Some(Cooldown { from, to, air, over })
@@ -608,7 +616,12 @@ impl Desk<'_> {
             );
         }
         let standby_pressure = self.given("circuit.standby_pressure");
-        Some(Circuit { oil_volume: oil_volume?, steel_mass: steel_mass?, heat_loss, standby_pressure })
+        Some(Circuit {
+            oil_volume: oil_volume?,
+            steel_mass: steel_mass?,
+            heat_loss,
+            standby_pressure,
+        })
     }
 
     fn duty(&mut self) -> Option<Duty> {
@@ -711,7 +724,14 @@ impl Desk<'_> {
         if let Some(power) = power {
             self.positive::<Power>("element.power", power);
         }
-        Some(Element { kind: kind?, place: place?, diameter: diameter?, power, surface, rated_voltage })
+        Some(Element {
+            kind: kind?,
+            place: place?,
+            diameter: diameter?,
+            power,
+            surface,
+            rated_voltage,
+        })
     }
 
     fn oils(&mut self, policy: &Policy) -> Vec<Oil> {
@@ -729,7 +749,10 @@ impl Desk<'_> {
         }
         let in_service = oils.iter().filter(|oil| oil.in_service()).count();
         if in_service > 1 {
-            self.fault("oil[1].in_service", format!("{in_service} oils are marked as in service; mark one"));
+            self.fault(
+                "oil[1].in_service",
+                format!("{in_service} oils are marked as in service; mark one"),
+            );
         }
         oils
     }
@@ -755,7 +778,12 @@ impl Desk<'_> {
 
         if !data_sheet && self.faults.len() == faults_before {
             return match (class, class_text) {
-                (Some(class), _) => self.from_class(number, class, name, in_service, policy),
+                (Some(class), _) => self.from_class(
+                    number,
+                    class,
+                    (name, in_service, reference_only.unwrap_or(false)),
+                    policy,
+                ),
                 (None, Some(text)) => {
                     let known: Vec<&str> = Class::all().iter().map(Class::id).collect();
                     self.fault(
@@ -774,8 +802,11 @@ impl Desk<'_> {
             };
         }
         let base = self.base(number, class_text.as_deref(), &points, viscosity_index);
-        let density =
-            self.or_typical::<Density>(&key("density"), base.typical_density(), "typical of the base oil, memory");
+        let density = self.or_typical::<Density>(
+            &key("density"),
+            base.typical_density(),
+            "typical of the base oil, memory",
+        );
         let flash_point = self.flash(number, base, &points);
         if self.faults.len() > faults_before {
             return None;
@@ -798,13 +829,20 @@ impl Desk<'_> {
             Ok(oil) => Some(oil),
             Err(error) => {
                 let at = if self.file.below(&key("viscosity")).next().is_some() {
-                    self.file.below(&key("viscosity")).next().map(|(sub, _)| format!("{}.{sub}", key("viscosity")))
+                    self.file
+                        .below(&key("viscosity"))
+                        .next()
+                        .map(|(sub, _)| format!("{}.{sub}", key("viscosity")))
                 } else {
                     None
                 };
                 let place_key = at.unwrap_or_else(|| key("viscosity_index"));
                 let place = self.file.place(&place_key);
-                self.faults.push(Fault { place, key: key("viscosity"), message: error.to_string() });
+                self.faults.push(Fault {
+                    place,
+                    key: key("viscosity"),
+                    message: error.to_string(),
+                });
                 None
             }
         }
@@ -816,8 +854,7 @@ impl Desk<'_> {
         &mut self,
         number: usize,
         class: &'static Class,
-        name: String,
-        in_service: bool,
+        (name, in_service, reference_only): (String, bool, bool),
         policy: &Policy,
     ) -> Option<Oil> {
         let oil = Oil::from_class(class, &policy.oil).ok()?;
@@ -826,7 +863,7 @@ impl Desk<'_> {
             format!("class {}: middle of the grade, least index, warmest pour point", class.id()),
             class.source(),
         );
-        Some(oil.named(name, in_service))
+        Some(oil.listed(name, in_service, reference_only))
     }
 
     fn points(&mut self, key: &str) -> Vec<(Temperature, ViscosityReading)> {
@@ -899,7 +936,7 @@ impl Desk<'_> {
         }
         let kv40 = kinematic_at(points, 40.0)?;
         let typical = crate::oil::typical_flash(base, kv40)?;
-        self.or_typical(&key, typical.as_celsius(), "least flash point of the class, memory")
+        self.or_typical(&key, typical, "least flash point of the class, memory")
     }
 
     fn contradictions(
@@ -914,32 +951,80 @@ impl Desk<'_> {
             if site.heating < site.minimum {
                 self.fault(
                     "site.heating_temperature",
-                    format!("{} is colder than the minimum, {}; the minimum is the coldest", site.heating, site.minimum),
+                    format!(
+                        "{} is colder than the minimum, {}; the minimum is the coldest",
+                        site.heating, site.minimum
+                    ),
                 );
             }
         }
         if let Some(pump) = pump {
-            self.ordered("pump.work_speed", pump.work_speed, "pump.start_speed", pump.start_speed, "under");
-            self.ordered("pump.viscosity_start_max", pump.viscosity_start_max, "pump.viscosity_work_max", pump.viscosity_work_max, "under");
-            self.ordered("pump.viscosity_min", pump.viscosity_min, "pump.viscosity_min_short", pump.viscosity_min_short, "under");
-            self.ordered("pump.inlet_pressure_work_min", pump.inlet_work_min, "pump.inlet_pressure_start_min", pump.inlet_start_min, "under");
+            self.ordered(
+                "pump.work_speed",
+                pump.work_speed,
+                "pump.start_speed",
+                pump.start_speed,
+                "under",
+            );
+            self.ordered(
+                "pump.viscosity_start_max",
+                pump.viscosity_start_max,
+                "pump.viscosity_work_max",
+                pump.viscosity_work_max,
+                "under",
+            );
+            self.ordered(
+                "pump.viscosity_min",
+                pump.viscosity_min,
+                "pump.viscosity_min_short",
+                pump.viscosity_min_short,
+                "under",
+            );
+            self.ordered(
+                "pump.inlet_pressure_work_min",
+                pump.inlet_work_min,
+                "pump.inlet_pressure_start_min",
+                pump.inlet_start_min,
+                "under",
+            );
             if pump.viscosity_work_max.as_mm2_per_s() <= pump.viscosity_min.as_mm2_per_s() {
                 self.fault(
                     "pump.viscosity_min",
-                    format!("{} is not under the thickest at work, {}", pump.viscosity_min, pump.viscosity_work_max),
+                    format!(
+                        "{} is not under the thickest at work, {}",
+                        pump.viscosity_min, pump.viscosity_work_max
+                    ),
                 );
             }
         }
         if let (Some(tank), Some(circuit)) = (reservoir, circuit) {
-            self.ordered("circuit.oil_volume", circuit.oil_volume, "reservoir.oil_volume", tank.oil_volume, "under");
-            self.ordered("circuit.steel_mass", circuit.steel_mass, "reservoir.steel_mass", tank.steel_mass, "under");
+            self.ordered(
+                "circuit.oil_volume",
+                circuit.oil_volume,
+                "reservoir.oil_volume",
+                tank.oil_volume,
+                "under",
+            );
+            self.ordered(
+                "circuit.steel_mass",
+                circuit.steel_mass,
+                "reservoir.steel_mass",
+                tank.steel_mass,
+                "under",
+            );
         }
         if let (Some(site), Some(duty)) = (site, duty) {
             if duty.parked_oil.is_some_and(|oil| oil < site.minimum) {
-                self.fault("duty.parked_oil", format!("is colder than the site minimum, {}", site.minimum));
+                self.fault(
+                    "duty.parked_oil",
+                    format!("is colder than the site minimum, {}", site.minimum),
+                );
             }
             if duty.oil_temperature_max <= site.minimum {
-                self.fault("duty.oil_temperature_max", format!("is not over the site minimum, {}", site.minimum));
+                self.fault(
+                    "duty.oil_temperature_max",
+                    format!("is not over the site minimum, {}", site.minimum),
+                );
             }
         }
     }
@@ -990,12 +1075,4 @@ fn kinematic_at(points: &[(Temperature, ViscosityReading)], celsius: f64) -> Opt
 
 fn index_of(points: &[(Temperature, ViscosityReading)]) -> Option<f64> {
     crate::oil::viscosity_index(kinematic_at(points, 40.0)?, kinematic_at(points, 100.0)?)
-}
-
-impl Place {
-    /// Whether the value was set over the file.
-    #[must_use]
-    pub fn is_set(&self) -> bool {
-        matches!(self, Self::Set)
-    }
 }

@@ -71,11 +71,9 @@ impl Key {
             KeyKind::Text => "text in quotes".to_owned(),
             KeyKind::Switch => "true or false".to_owned(),
             KeyKind::Whole => "a whole number".to_owned(),
-            KeyKind::Number(least, greatest) => format!(
-                "a number from {} to {}",
-                quantity::shown(least),
-                quantity::shown(greatest)
-            ),
+            KeyKind::Number(least, greatest) => {
+                format!("a number from {} to {}", quantity::shown(least), quantity::shown(greatest))
+            }
             KeyKind::Choice(words) => format!("one of {}", words.join(", ")),
             KeyKind::Quantity(kind) => format!("a {} in quotes", kind.noun),
             KeyKind::Viscosity => "a viscosity in quotes".to_owned(),

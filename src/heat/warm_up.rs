@@ -34,6 +34,12 @@ impl HeatCapacity {
         Self { at_zero: oil_kg * zero + steel_kg * steel_heat, slope: oil_kg * slope }
     }
 
+    /// Of two bodies together.
+    #[must_use]
+    pub fn plus(&self, other: &Self) -> Self {
+        Self { at_zero: self.at_zero + other.at_zero, slope: self.slope + other.slope }
+    }
+
     /// At a temperature in °C, J/K.
     #[must_use]
     pub fn at(&self, celsius: f64) -> f64 {

@@ -11,7 +11,7 @@ pub static D341: Method = Method {
 };
 
 /// 0 °C in kelvin.
-pub(crate) const ZERO_C: f64 = 273.15;
+const ZERO_C: f64 = 273.15;
 /// Lowest and highest viscosity the one-term form is stated for, mm²/s. ASTM D341-20 (memory).
 pub const VALID: std::ops::RangeInclusive<f64> = 0.21..=2e7;
 
