@@ -172,6 +172,6 @@ fn film_u(walls: Walls, oil: OilFilm<'_>, oil_c: f64, air_c: f64) -> f64 {
         out - oil.wall(oil_c, wall_c, walls.height) * (oil_c - wall_c)
     };
     let surface_c =
-        solve::root(balance, air_c, oil_c, 1e-6 * span).unwrap_or(f64::midpoint(air_c, oil_c));
+        solve::root(balance, air_c, oil_c, 1e-9 * span).unwrap_or(f64::midpoint(air_c, oil_c));
     outside(surface_c) * (surface_c - air_c) / span
 }
