@@ -169,9 +169,12 @@ fn film_u(walls: Walls, oil: OilFilm<'_>, oil_c: f64, air_c: f64) -> f64 {
     let balance = |surface_c: f64| {
         let out = outside(surface_c) * (surface_c - air_c);
         let wall_c = surface_c + out * walls.insulation;
+        if wall_c >= oil_c {
+            return out;
+        }
         out - oil.wall(oil_c, wall_c, walls.height) * (oil_c - wall_c)
     };
-    let surface_c =
-        solve::root(balance, air_c, oil_c, 1e-9 * span).unwrap_or(f64::midpoint(air_c, oil_c));
+    // The ends differ in sign by construction; were there no root, the answer would be no number.
+    let surface_c = solve::root(balance, air_c, oil_c, 1e-9 * span).unwrap_or(f64::NAN);
     outside(surface_c) * (surface_c - air_c) / span
 }
