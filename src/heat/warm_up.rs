@@ -203,13 +203,18 @@ pub fn cooling_time_s(
     if to_c <= curve.air_c() || from_c < to_c {
         return None;
     }
-    // Simpson on a smooth integrand over a few kelvin.
+    // ∫ C dT/(UA (T - Ta)) in ln(T - Ta), where the integrand stays smooth down to the air: Simpson.
     const HALVES: usize = 16;
-    let f = |t: f64| capacity.at(t) / (loss_factor * curve.loss_w(t));
-    let step = (from_c - to_c) / HALVES as f64;
-    let mut sum = f(to_c) + f(from_c);
+    let air_c = curve.air_c();
+    let (from, to) = ((from_c - air_c).ln(), (to_c - air_c).ln());
+    let f = |u: f64| {
+        let t = air_c + u.exp();
+        capacity.at(t) / (loss_factor * curve.ua(t))
+    };
+    let step = (from - to) / HALVES as f64;
+    let mut sum = f(to) + f(from);
     for at in 1..HALVES {
-        sum += f(to_c + step * at as f64) * if at % 2 == 1 { 4.0 } else { 2.0 };
+        sum += f(to + step * at as f64) * if at % 2 == 1 { 4.0 } else { 2.0 };
     }
     Some(sum * step / 3.0)
 }
