@@ -20,7 +20,10 @@ const HAND: &str = "by hand";
 
 #[track_caller]
 fn close(found: f64, want: f64, tolerance: f64, source: &str) {
-    assert!((found - want).abs() <= tolerance, "found {found}, want {want} ± {tolerance}: {source}");
+    assert!(
+        (found - want).abs() <= tolerance,
+        "found {found}, want {want} ± {tolerance}: {source}"
+    );
 }
 
 #[track_caller]
@@ -170,9 +173,18 @@ fn cool_down_and_soak() {
     for (u, want) in [(16.0, -29.434), (6.8, -20.2449), (1.4, 21.8731), (0.74, 33.6269)] {
         let curve = LossCurve::new(&fixed(u * AREA, -30.0), 60.0);
         let found = parked_c(&curve, &capacity, 50.0, 12.0, 1.0, |_| -30.0);
-        close(found, want, 2.0, "closed form with one heat capacity; that of warm oil is 8 % larger");
+        close(
+            found,
+            want,
+            2.0,
+            "closed form with one heat capacity; that of warm oil is 8 % larger",
+        );
     }
-    assert_eq!(parked_c(&curve, &capacity, 50.0, 25.0, 1.0, |_| -30.0), -30.0, "no credit past 24 h");
+    assert_eq!(
+        parked_c(&curve, &capacity, 50.0, 25.0, 1.0, |_| -30.0),
+        -30.0,
+        "no credit past 24 h"
+    );
     let (share, lag) = daily_wave(tau_s / 3600.0);
     within(share, 0.55535, 1e-4, HAND);
     within(lag, 3.75101, 1e-4, HAND);
@@ -184,7 +196,9 @@ fn cool_down_and_soak() {
 #[test]
 fn the_loss_curve_is_as_good_as_the_films() {
     let oil = vg46();
-    for (wind, mm, air) in [(0.0, 0.0, -30.0), (6.0, 0.0, -40.0), (2.0, 25.0, -50.0), (0.4, 0.0, -5.0)] {
+    for (wind, mm, air) in
+        [(0.0, 0.0, -30.0), (6.0, 0.0, -40.0), (2.0, 25.0, -50.0), (0.4, 0.0, -5.0)]
+    {
         let loss = TankLoss::from_films(walls(wind, mm), oil.film(), 0.9, AREA, air);
         let curve = LossCurve::new(&loss, 60.0);
         let mut t = air + 2.0;
@@ -252,7 +266,13 @@ fn skins() {
 fn watt_density_caps_and_limits() {
     let policy = HeatPolicy::default();
     let still = ElementPlace::BelowSuction;
-    for (nu, want) in [(None, 0.7), (Some(5001.0), 0.7), (Some(5000.0), 1.2), (Some(500.0), 1.2), (Some(499.0), 1.55)] {
+    for (nu, want) in [
+        (None, 0.7),
+        (Some(5001.0), 0.7),
+        (Some(5000.0), 1.2),
+        (Some(500.0), 1.2),
+        (Some(499.0), 1.55),
+    ] {
         assert_eq!(density_cap(nu, still, &policy), want, "common practice, no source");
     }
     assert_eq!(density_cap(None, ElementPlace::Circulated, &policy), 2.3);
@@ -279,7 +299,8 @@ fn circulation() {
 #[test]
 fn circuits() {
     let policy = HeatPolicy::default();
-    let circuit = |volts, amperes, three_phase| Circuit { volts, amperes, three_phase, other_w: 0.0 };
+    let circuit =
+        |volts, amperes, three_phase| Circuit { volts, amperes, three_phase, other_w: 0.0 };
     let source = "NFPA 70 210.20(A) [quoted]; plug outlets: common practice";
     for (volts, amperes, want) in [
         (120.0, 15.0, 1440.0),
@@ -317,7 +338,10 @@ fn heaters_from_real_sizes() {
     assert_eq!(choose(&sizes, wanted(400.0, 480.0, 2990.0)), fits(&[500.0], false));
     assert_eq!(choose(&sizes, wanted(400.0, 520.0, 500.0)), fits(&[500.0], true));
     assert_eq!(choose(&sizes, wanted(3200.0, 3900.0, 9000.0)), fits(&[1000.0, 3000.0], false));
-    assert_eq!(choose(&sizes, wanted(6500.0, 7000.0, 9000.0)), fits(&[1000.0, 3000.0, 3000.0], false));
+    assert_eq!(
+        choose(&sizes, wanted(6500.0, 7000.0, 9000.0)),
+        fits(&[1000.0, 3000.0, 3000.0], false)
+    );
     assert_eq!(
         choose(&sizes, wanted(1200.0, 1400.0, 540.0)),
         Chosen::CircuitTooSmall { elements: vec![1500.0] }

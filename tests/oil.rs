@@ -12,7 +12,10 @@ use coldsump::quantity::Density;
 
 #[track_caller]
 fn close(found: f64, want: f64, tolerance: f64, source: &str) {
-    assert!((found - want).abs() <= tolerance, "found {found}, want {want} ± {tolerance}: {source}");
+    assert!(
+        (found - want).abs() <= tolerance,
+        "found {found}, want {want} ± {tolerance}: {source}"
+    );
 }
 
 #[test]
@@ -146,9 +149,7 @@ fn d341_against_computed_lines() {
     close(line.temperature_at(1000.0), -12.23, 0.01, source);
     let hot = ViscosityCurve::through(&[(-40.0, 600.0), (40.0, 13.2)]).unwrap();
     close(hot.at(100.0), 4.023125, 0.01, "one-term form; computed outside this package");
-    for (kv40, kv100, nu, want) in
-        [(46.0, 6.8, 1600.0, -10.79471), (32.0, 6.3, 860.0, -16.44912)]
-    {
+    for (kv40, kv100, nu, want) in [(46.0, 6.8, 1600.0, -10.79471), (32.0, 6.3, 860.0, -16.44912)] {
         let curve = ViscosityCurve::through(&[(40.0, kv40), (100.0, kv100)]).unwrap();
         close(curve.lines().next().unwrap().temperature_at(nu), want, 0.05, source);
     }
@@ -186,7 +187,10 @@ fn d341_many_points_and_what_it_refuses() {
         refused(&[(40.0, 6.8), (100.0, 46.0)]),
         "viscosity rises from 6.8 mm²/s at 40 °C to 46 mm²/s at 100 °C on warming; are the two values swapped?"
     );
-    assert_eq!(refused(&[(40.0, 6.8), (40.0, 5.0)]), "two viscosities are given at 40 °C; keep one");
+    assert_eq!(
+        refused(&[(40.0, 6.8), (40.0, 5.0)]),
+        "two viscosities are given at 40 °C; keep one"
+    );
     assert!(refused(&[(40.0, 6.8)]).contains("needs two temperatures"));
     assert!(refused(&[(40.0, 6.8), (100.0, 0.1)]).contains("outside 0.21 to 2e7"));
 }
@@ -264,7 +268,12 @@ fn classes_match_what_their_limits_imply() {
     close(line(35.2, 140.0).lines().next().unwrap().temperature_at(1500.0), -19.4, 0.1, source);
     let two = |a, b| ViscosityCurve::through(&[a, b]).unwrap();
     close(two((0.0, 420.0), (100.0, 5.0)).at(40.0), 32.5, 0.1, source);
-    close(two((-18.0, 1500.0), (40.0, 32.0)).lines().next().unwrap().temperature_at(1000.0), -13.9, 0.1, source);
+    close(
+        two((-18.0, 1500.0), (40.0, 32.0)).lines().next().unwrap().temperature_at(1000.0),
+        -13.9,
+        0.1,
+        source,
+    );
     close(two((-12.0, 1500.0), (40.0, 46.0)).at(-30.0), 12322.0, 123.0, source);
     close(viscosity_index(32.5, 5.0).unwrap(), 66.0, 1.0, source);
 

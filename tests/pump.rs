@@ -14,7 +14,10 @@ use proptest::prelude::*;
 
 #[track_caller]
 fn close(found: f64, want: f64, tolerance: f64, source: &str) {
-    assert!((found - want).abs() <= tolerance, "found {found}, want {want} ± {tolerance}: {source}");
+    assert!(
+        (found - want).abs() <= tolerance,
+        "found {found}, want {want} ± {tolerance}: {source}"
+    );
 }
 
 #[test]
@@ -25,7 +28,9 @@ fn atmosphere_as_published() {
     {
         close(atmosphere_kpa(metres) * 1000.0, pascal, 5.0, fluids);
     }
-    for (metres, pascal) in [(500.0, 95461.3), (1500.0, 84559.7), (2500.0, 74691.8), (4000.0, 61660.4)] {
+    for (metres, pascal) in
+        [(500.0, 95461.3), (1500.0, 84559.7), (2500.0, 74691.8), (4000.0, 61660.4)]
+    {
         close(atmosphere_kpa(metres) * 1000.0, pascal, 5.0, fluids);
     }
     // Geometric height of a geopotential height of 2000 m: 79495.2 Pa, ISO 2533 table [memory].
@@ -40,13 +45,23 @@ fn dry_air_against_an_equation_of_state() {
     close(air.kinematic_viscosity / 1.24213e-5, 1.0, 1e-3, "US Standard Atmosphere 1976 [memory]");
     close(air.conductivity / 0.0233363, 1.0, 1e-3, "US Standard Atmosphere 1976 [memory]");
     close(air.conductivity / 0.0235907, 1.0, 0.015, "computed with CoolProp 8.0.0");
-    close(air.density * air.kinematic_viscosity / 1.67137e-5, 1.0, 0.005, "computed with CoolProp 8.0.0");
+    close(
+        air.density * air.kinematic_viscosity / 1.67137e-5,
+        1.0,
+        0.005,
+        "computed with CoolProp 8.0.0",
+    );
 }
 
 #[test]
 fn friction_factor_as_published() {
     close(friction_factor(50.0, 2e-4), 1.28, 1e-5, "64/Re, by hand");
-    close(friction_factor(1e5, 1e-4), 0.01846262, 1e-7, "fluids 1.3.1, documentation of Churchill_1977");
+    close(
+        friction_factor(1e5, 1e-4),
+        0.01846262,
+        1e-7,
+        "fluids 1.3.1, documentation of Churchill_1977",
+    );
     close(friction_factor(3000.0, 2e-4), 0.04312273, 1e-5, "computed with fluids 1.3.1");
     // Against Colebrook, solved here by iteration: F. M. White, Fluid Mechanics, chapter 6.
     for (re, roughness) in [(1e4, 2e-4), (1e5, 2e-4), (1e6, 1e-3)] {
@@ -245,7 +260,10 @@ fn kinds_hold_what_pumps_need() {
         }
         assert!(row.viscosity_start_max.typical > row.viscosity_work_max.typical, "{kind}");
         assert!(row.viscosity_min.typical > row.viscosity_min_short.typical, "{kind}");
-        assert!(row.inlet_pressure_work_min.typical > row.inlet_pressure_start_min.typical, "{kind}");
+        assert!(
+            row.inlet_pressure_work_min.typical > row.inlet_pressure_start_min.typical,
+            "{kind}"
+        );
     }
 }
 

@@ -269,6 +269,24 @@ fn judge(setup: &Setup<'_>, gels: bool, found: &mut Assessment) {
             "a vegetable oil may set solid above its pour point after days in the cold".to_owned(),
         );
     }
+    if let (Some(found), Some(most)) =
+        (found.first_turn.case_drain_kpa, case.case_drain.and_then(|drain| drain.pressure_max))
+    {
+        if found > most.as_kpa() {
+            because(
+                "case-pressure",
+                format!(
+                    "the case drain line builds {found:.0} kPa in the cold, over the {most} allowed"
+                ),
+            );
+        }
+    }
+    if setup.oil.class_only() {
+        because(
+            "class-only",
+            "known by its class alone: limits of the class, not a measured oil".to_owned(),
+        );
+    }
     if setup.oil.pour_point().is_none() {
         because(
             "pour-point-unknown",

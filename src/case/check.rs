@@ -11,7 +11,7 @@ use super::model::{
     MinimumHow, Prefer, Pump, Reservoir, Site, Supply, Units,
 };
 use super::policy::Policy;
-use crate::oil::{Base, Class, Oil, OilData, saybolt};
+use crate::oil::{Base, Class, CurveError, Oil, OilData, OilError, saybolt};
 use crate::pump::{Fitting, Neutral, PumpKind, Strainer, SuctionLine};
 use crate::quantity::{
     AbsolutePressure, Density, KinematicViscosity, Power, Quantity, Temperature, ViscosityReading,
@@ -828,24 +828,42 @@ impl Desk<'_> {
         match Oil::from_data(data, &policy.oil) {
             Ok(oil) => Some(oil),
             Err(error) => {
-                let at = if self.file.below(&key("viscosity")).next().is_some() {
-                    self.file
-                        .below(&key("viscosity"))
-                        .next()
-                        .map(|(sub, _)| format!("{}.{sub}", key("viscosity")))
-                } else {
-                    None
-                };
-                let place_key = at.unwrap_or_else(|| key("viscosity_index"));
-                let place = self.file.place(&place_key);
-                self.faults.push(Fault {
-                    place,
-                    key: key("viscosity"),
-                    message: error.to_string(),
-                });
+                let at = self.blamed(number, &error);
+                self.fault(&at, error.to_string());
                 None
             }
         }
+    }
+
+    /// The key to point at for what is wrong with an oil.
+    fn blamed(&self, number: usize, error: &OilError) -> String {
+        let key = |name: &str| format!("oil[{number}].{name}");
+        let point = |celsius: f64| {
+            ["viscosity", "cold_viscosity"].iter().find_map(|table| {
+                let table = key(table);
+                let mut rows = self.file.below(&table).filter(|(at, _)| {
+                    at.parse::<Temperature>().is_ok_and(|t| (t.as_celsius() - celsius).abs() < 1e-6)
+                });
+                rows.next().map(|(at, _)| format!("{table}.{at}"))
+            })
+        };
+        let at = match error {
+            OilError::Curve(CurveError::Rises { warm_at: at, .. })
+            | OilError::Curve(
+                CurveError::SameTemperature { at } | CurveError::OutOfRange { at, .. },
+            )
+            | OilError::MeasuredBelowPour { at, .. } => point(*at),
+            OilError::CloudBelowPour { .. } => Some(key("cloud_point")),
+            OilError::IndexWithout40 | OilError::IndexOutOfReach { .. } => {
+                Some(key("viscosity_index"))
+            }
+            _ => self
+                .file
+                .below(&key("viscosity"))
+                .next()
+                .map(|(at, _)| format!("{}.{at}", key("viscosity"))),
+        };
+        at.unwrap_or_else(|| key("viscosity"))
     }
 
     /// An oil of a built-in class without a data sheet. What the sheet would say is refused here:
