@@ -110,7 +110,10 @@ fn one_message_a_fault() {
             "case.toml:10:1: duty.oil_volume: unknown key; did you mean `reservoir.oil_volume`?",
         ),
         // Syntax.
-        (with("[pump\n"), "case.toml:10:2: file: not valid TOML: duplicate key\ncase.toml:10:6: file: not valid TOML: unclosed table, expected `]`"),
+        (
+            with("[pump\n"),
+            "case.toml:10:2: file: not valid TOML: duplicate key\ncase.toml:10:6: file: not valid TOML: unclosed table, expected `]`",
+        ),
         (
             with("[pump]\nneutral = \"open-centre\"\n"),
             "case.toml:10:2: file: not valid TOML: duplicate key",

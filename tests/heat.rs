@@ -140,7 +140,11 @@ fn warm_up_hold_and_cool_down() {
     assert_eq!(hours(16.0, 500.0), None, "{HT}: never");
     within(hours(1e-9, 1500.0).unwrap_or(f64::NAN), 3.05061, 5e-4, HT);
     within(hours(3.0, 750.0).unwrap_or(f64::NAN), 6.8194, 5e-4, HT);
-    close(steady_c(&fixed(16.0, -30.0), 500.0, 1.0).unwrap_or(f64::NAN), 1.25, 1e-4, HAND);
+    let steady =
+        |power| steady_c(&LossCurve::new(&fixed(16.0, -30.0), 60.0), &fixed(16.0, -30.0), power);
+    close(steady(500.0).unwrap_or(f64::NAN), 1.25, 1e-4, HAND);
+    close(steady(2000.0).unwrap_or(f64::NAN), 95.0, 1e-2, HAND);
+    assert_eq!(steady(6000.0), None, "past 300 °C nothing holds");
     within(fixed(16.0, -30.0).loss_w(20.0), 800.0, 1e-12, HAND);
     assert_eq!(fixed(16.0, -30.0).loss_w(-35.0), 0.0, "nothing at or below the air");
 

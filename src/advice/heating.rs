@@ -417,7 +417,7 @@ pub(super) fn heating(
         heating.time_s = usual.time_s(power * share);
         heating.time_high_s = worst.time_s(power * share);
         heating.energy_kwh = heating.time_s.map(|time| power * time / 3.6e6);
-        heating.steady_c = heat::steady_c(&tank.loss, power * share, 1.0);
+        heating.steady_c = heat::steady_c(&tank.curve, &tank.loss, power * share);
         heating.current_a = supply.map(|circuit| circuit.current_a(power));
         let density = fitted_density.unwrap_or(density_max);
         heating.watt_density = Some(density);

@@ -337,13 +337,28 @@ fn inlet(setup: &Setup<'_>, edge: Edge, rpm: f64, least_kpa: f64, assumed: bool)
             return Outcome::NotChecked(Why::TypicalLimitDoesNotFit);
         }
     }
-    let margin =
-        |t: f64| line.pressure_kpa(q, setup.viscosity(edge, t), setup.bulk.density(t)) - least_kpa;
+    // The logarithm of what may be lost over what is lost: nearly straight in temperature.
+    let margin = |t: f64| {
+        let balance = line.balance(q, setup.viscosity(edge, t), setup.bulk.density(t));
+        let full = balance.tank + balance.head;
+        let (spare, lost) = (full - least_kpa, full - balance.pressure);
+        if spare > 0.0 { (spare / lost).ln() } else { -1.0 }
+    };
     let (from, to) = (setup.bottom_c, setup.case.policy.limits.search_to_c);
     if margin(to) < 0.0 {
         return Outcome::Unattainable(Why::InletTooLow);
     }
     let mut met = to;
+    // Where even the worst of the transition region leaves enough, start where the flow is laminar.
+    let worst =
+        line.lower_bound_kpa(q, LAMINAR_BELOW, setup.bulk.density(to), setup.bulk.density(from));
+    if worst.is_some_and(|worst| worst >= least_kpa) {
+        let laminar = |t: f64| (line.reynolds(q, setup.viscosity(edge, t)) / LAMINAR_BELOW).ln();
+        if laminar(from) >= 0.0 {
+            return Outcome::NeverBites { to: from };
+        }
+        met = solve::root(laminar, from, to, 1e-3).unwrap_or(to);
+    }
     while met > from && line.reynolds(q, setup.viscosity(edge, met)) > LAMINAR_BELOW {
         let next = (met - 1.0).max(from);
         if margin(next) < 0.0 {

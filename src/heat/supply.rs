@@ -103,53 +103,62 @@ pub enum Chosen {
 /// that covers the loss as computed; else two, then three elements.
 #[must_use]
 pub fn choose(sizes: &[f64], wanted: Wanted) -> Chosen {
-    let combinations = combinations(sizes);
-    let total = |elements: &[f64]| elements.iter().sum::<f64>() * wanted.delivered;
-    let pick = |count: &[usize], least: f64, most: f64| {
-        combinations
-            .iter()
-            .filter(|elements| count.contains(&elements.len()))
-            .filter(|elements| total(elements) >= least && total(elements) <= most)
-            .min_by(|a, b| total(a).total_cmp(&total(b)).then(a.len().cmp(&b.len())))
-            .cloned()
+    let pick = |counts: std::ops::RangeInclusive<usize>, least: f64, most: f64| {
+        let mut best: Option<([f64; 3], usize, f64)> = None;
+        combinations(sizes, counts, |elements, count| {
+            let total = elements.iter().sum::<f64>() * wanted.delivered;
+            let better = best.is_none_or(|(_, fewest, smallest)| {
+                total < smallest || (total == smallest && count < fewest)
+            });
+            if total >= least && total <= most && better {
+                best = Some((elements, count, total));
+            }
+        });
+        best.map(|(elements, count, _)| elements.iter().copied().take(count).collect::<Vec<f64>>())
     };
     let most = wanted.carried_w.min(wanted.surface_w);
     let (needed, high) = (wanted.needed_w, wanted.needed_high_w);
-    let ladder: [(&[usize], f64, bool); 6] = [
-        (&[1], high, false),
-        (&[1], needed, true),
-        (&[2], high, false),
-        (&[2], needed, true),
-        (&[3], high, false),
-        (&[3], needed, true),
+    let ladder = [
+        (1, high, false),
+        (1, needed, true),
+        (2, high, false),
+        (2, needed, true),
+        (3, high, false),
+        (3, needed, true),
     ];
     for (count, least, tight) in ladder {
-        if let Some(elements) = pick(count, least, most) {
+        if let Some(elements) = pick(count..=count, least, most) {
             return Chosen::Fits { elements, tight };
         }
     }
-    if pick(&[1, 2, 3], needed, f64::INFINITY).is_none() {
+    if pick(1..=3, needed, f64::INFINITY).is_none() {
         return Chosen::NoSize;
     }
-    if pick(&[1, 2, 3], needed, wanted.surface_w).is_none() {
+    if pick(1..=3, needed, wanted.surface_w).is_none() {
         return Chosen::SurfaceTooSmall;
     }
     let without_circuit =
-        ladder.iter().find_map(|(count, least, _)| pick(count, *least, wanted.surface_w));
+        ladder.iter().find_map(|(count, least, _)| pick(*count..=*count, *least, wanted.surface_w));
     Chosen::CircuitTooSmall { elements: without_circuit.unwrap_or_default() }
 }
 
-/// Every one, two or three of the sizes.
-fn combinations(sizes: &[f64]) -> Vec<Vec<f64>> {
-    let mut all = Vec::new();
+/// Every one, two or three of the sizes, as the counts ask; unused places are 0.
+fn combinations(
+    sizes: &[f64],
+    counts: std::ops::RangeInclusive<usize>,
+    mut each: impl FnMut([f64; 3], usize),
+) {
     for (i, a) in sizes.iter().enumerate() {
-        all.push(vec![*a]);
-        for (j, b) in sizes.iter().enumerate().skip(i) {
-            all.push(vec![*a, *b]);
-            for c in sizes.iter().skip(j) {
-                all.push(vec![*a, *b, *c]);
+        if counts.contains(&1) {
+            each([*a, 0.0, 0.0], 1);
+        }
+        for (j, b) in sizes.iter().enumerate().skip(i).take_while(|_| *counts.end() >= 2) {
+            if counts.contains(&2) {
+                each([*a, *b, 0.0], 2);
+            }
+            for c in sizes.iter().skip(j).take_while(|_| *counts.end() >= 3) {
+                each([*a, *b, *c], 3);
             }
         }
     }
-    all
 }

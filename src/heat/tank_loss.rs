@@ -45,6 +45,9 @@ impl Exposure {
     }
 }
 
+/// Where the solution of a film starts: the share of the difference outside the tank.
+const GUESS: f64 = 0.5;
+
 /// What the films need to know of a tank. Lengths in m, wind in m/s as it reaches the tank.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct Walls {
@@ -129,7 +132,23 @@ impl<'a> TankLoss<'a> {
     pub fn u_value(&self, oil_c: f64) -> f64 {
         match self.way {
             Way::Fixed(ua, _) => ua / self.area,
-            Way::Films(walls, oil, _) => film_u(walls, oil, oil_c, self.air_c),
+            Way::Films(walls, oil, _) => film_u(walls, oil, oil_c, self.air_c, GUESS).0,
+        }
+    }
+
+    /// Loss per kelvin over the air, W/K, at several oil temperatures in °C, each solved from the
+    /// one before.
+    pub(super) fn ua_along(&self, temperatures: impl Iterator<Item = f64>, out: &mut [f64]) {
+        let mut guess = GUESS;
+        for (ua, oil_c) in out.iter_mut().zip(temperatures) {
+            *ua = match self.way {
+                Way::Fixed(ua, _) => ua,
+                Way::Films(walls, oil, share) => {
+                    let (u, outside) = film_u(walls, oil, oil_c, self.air_c, guess);
+                    guess = outside;
+                    share * u * self.area
+                }
+            };
         }
     }
 
@@ -150,31 +169,47 @@ impl<'a> TankLoss<'a> {
         }
         self.ua(oil_c) * (oil_c - self.air_c)
     }
-
-    /// Whether U changes with temperature.
-    pub(super) const fn is_fixed(&self) -> bool {
-        matches!(self.way, Way::Fixed(..))
-    }
 }
 
-fn film_u(walls: Walls, oil: OilFilm<'_>, oil_c: f64, air_c: f64) -> f64 {
+/// U and the share of the temperature difference that lies outside the tank, started from a guess of
+/// that share.
+fn film_u(walls: Walls, oil: OilFilm<'_>, oil_c: f64, air_c: f64, guess: f64) -> (f64, f64) {
     let span = oil_c - air_c;
     if span <= 1e-9 {
-        return 0.0;
+        return (0.0, guess);
     }
-    let outside = |surface_c: f64| {
-        film::outside(surface_c, air_c, walls.wind, walls.height, walls.length, walls.emissivity)
+    // With the surface at `share` of the difference over the air: U of the three resistances in
+    // series, and the share they give.
+    let step = |share: f64| {
+        let surface_c = air_c + share * span;
+        let out = film::outside(
+            surface_c,
+            air_c,
+            walls.wind,
+            walls.height,
+            walls.length,
+            walls.emissivity,
+        );
+        let wall_c = (surface_c + out * share * span * walls.insulation).min(oil_c);
+        let inside = oil.wall(oil_c, wall_c, walls.height);
+        let u = 1.0 / (1.0 / inside + walls.insulation + 1.0 / out);
+        (u, u / out)
     };
-    // Heat out of the surface less heat into the wall; rises with the surface temperature.
-    let balance = |surface_c: f64| {
-        let out = outside(surface_c) * (surface_c - air_c);
-        let wall_c = surface_c + out * walls.insulation;
-        if wall_c >= oil_c {
-            return out;
+    // Secant steps on the fixed point; it is flat, so a few are enough.
+    let (mut x0, mut x1) = (guess, step(guess).1);
+    let mut f0 = x1 - x0;
+    for _ in 0..20 {
+        let (u, next) = step(x1);
+        let f1 = next - x1;
+        if f1.abs() < 1e-7 {
+            return (u, x1);
         }
-        out - oil.wall(oil_c, wall_c, walls.height) * (oil_c - wall_c)
-    };
-    // The ends differ in sign by construction; were there no root, the answer would be no number.
-    let surface_c = solve::root(balance, air_c, oil_c, 1e-9 * span).unwrap_or(f64::NAN);
-    outside(surface_c) * (surface_c - air_c) / span
+        let slope = (f1 - f0) / (x1 - x0);
+        let x2 = if slope < -1e-3 { x1 - f1 / slope } else { next };
+        (x0, f0) = (x1, f1);
+        x1 = x2.clamp(1e-6, 1.0);
+    }
+    // Did not settle: halve instead.
+    let share = solve::root(|x| step(x).1 - x, 1e-6, 1.0, 1e-10).unwrap_or(f64::NAN);
+    (step(share).0, share)
 }

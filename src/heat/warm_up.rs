@@ -48,16 +48,16 @@ impl HeatCapacity {
 }
 
 /// Nodes of the loss curve.
-const NODES: usize = 20;
+const NODES: usize = 14;
 /// Pieces of a warm-up.
-const PIECES: usize = 40;
+const PIECES: usize = 32;
 
 /// The loss of a tank over temperature, evaluated once.
 #[derive(Debug, Clone)]
 pub struct LossCurve {
     air_c: f64,
     span_k: f64,
-    /// Loss per kelvin, W/K, at `air + span·(i/(NODES-1))²`.
+    /// Loss per kelvin, W/K, at `air + span·(i/(NODES-1))³`.
     ua: [f64; NODES],
 }
 
@@ -68,16 +68,14 @@ impl LossCurve {
         let air_c = loss.air_c();
         let span_k = (top_c - air_c).max(1.0);
         let mut ua = [0.0; NODES];
-        if loss.is_fixed() {
-            ua = [loss.ua(air_c + span_k); NODES];
-        } else {
-            for (node, ua) in ua.iter_mut().enumerate().skip(1) {
-                let s = node as f64 / (NODES - 1) as f64;
-                *ua = loss.ua(air_c + span_k * s * s);
-            }
-            // The film of a vanishing difference is that of a very small one.
-            ua[0] = loss.ua(air_c + 1e-3);
-        }
+        // The film of a vanishing difference is that of a very small one. Hottest first: there the
+        // films change least from node to node.
+        let node = |at: usize| {
+            let s = at as f64 / (NODES - 1) as f64;
+            air_c + (span_k * s * s * s).max(1e-4)
+        };
+        loss.ua_along((0..NODES).rev().map(node), &mut ua);
+        ua.reverse();
         Self { air_c, span_k, ua }
     }
 
@@ -90,7 +88,7 @@ impl LossCurve {
     /// Loss per kelvin over the air at an oil temperature in °C, W/K.
     #[must_use]
     pub fn ua(&self, celsius: f64) -> f64 {
-        let x = ((celsius - self.air_c) / self.span_k).clamp(0.0, 1.0).sqrt() * (NODES - 1) as f64;
+        let x = ((celsius - self.air_c) / self.span_k).clamp(0.0, 1.0).cbrt() * (NODES - 1) as f64;
         // x lies between 0 and NODES - 1.
         #[allow(
             clippy::cast_possible_truncation,
@@ -219,9 +217,13 @@ pub fn cooling_time_s(
     Some(sum * step / 3.0)
 }
 
-/// The temperature, °C, at which a tank's loss times `loss_factor` eats up a power in W; `None`
-/// above 300 °C, where nothing here holds.
+/// The temperature, °C, at which a tank's loss eats up a power in W; `None` above 300 °C, where
+/// nothing here holds.
 #[must_use]
-pub fn steady_c(loss: &TankLoss<'_>, power_w: f64, loss_factor: f64) -> Option<f64> {
-    solve::root(|t| loss_factor * loss.loss_w(t) - power_w, loss.air_c(), 300.0, 1e-6)
+pub fn steady_c(curve: &LossCurve, loss: &TankLoss<'_>, power_w: f64) -> Option<f64> {
+    let top = curve.air_c + curve.span_k;
+    if curve.loss_w(top) >= power_w {
+        return solve::root(|t| curve.loss_w(t) - power_w, curve.air_c, top, 1e-6);
+    }
+    solve::root(|t| loss.loss_w(t) - power_w, top, 300.0, 1e-3)
 }

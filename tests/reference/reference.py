@@ -22,7 +22,6 @@ import re
 import sys
 import time
 import tomllib
-from functools import lru_cache
 from importlib.metadata import version
 
 from chemicals.viscosity import viscosity_index as d2270
@@ -381,7 +380,6 @@ class Tank:
         steel = self.steel if steel is None else steel
         return litres / 1000 * self.oil.rho15 * self.oil.cp(t) + steel * 440
 
-    @lru_cache(maxsize=None)
     def u(self, t):
         if self.cooldown:
             return self.cooled / self.area
