@@ -1,7 +1,7 @@
 //! The one table of case keys: path, kind, need, example, question, where to find it.
 //!
 //! Reading, `--set`, messages and the key list of the README come from here. The `policy` keys are
-//! rows of [`super::policy`] and are listed with these by [`all`].
+//! rows of the policy table and are listed with these by [`all`].
 
 use super::policy;
 use crate::quantity::{self, Kind, Quantity};
