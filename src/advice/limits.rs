@@ -1,7 +1,7 @@
 //! The one table of limits: id, side, method, and the temperature from which each is met.
 
 use super::setup::Setup;
-use crate::pump::{INLET_BALANCE, PumpKind};
+use crate::pump::INLET_BALANCE;
 use crate::solve;
 use crate::source::{Method, Source};
 
@@ -260,25 +260,14 @@ fn line_flow(setup: &Setup<'_>, _: Edge) -> Outcome {
     setup.line_floor_c().map_or(Outcome::NotChecked(Why::PourPointUnknown), Outcome::At)
 }
 
-/// The start limit of the pump. Where the suction line is not known it is tightened to what a usual
-/// line passes at this elevation (this project's judgement), so that the answer stays on the safe
-/// side.
+/// The start limit of the pump, tightened where the inlet cannot be checked.
 fn viscosity_start(setup: &Setup<'_>, edge: Edge) -> Outcome {
-    let pump = &setup.case.pump;
-    let policy = &setup.case.policy.limits;
-    let mut limit = pump.viscosity_start_max.as_mm2_per_s();
-    if setup.inlet.is_none() {
-        let usual = match pump.kind {
-            PumpKind::ExternalGear | PumpKind::InternalGear | PumpKind::Gerotor => {
-                policy.unproven_viscosity_gear_mm2_s
-            }
-            _ => policy.unproven_viscosity_mm2_s,
-        };
-        let left = setup.atmosphere_kpa - pump.inlet_start_min.as_kpa();
-        if left <= 0.0 {
-            return Outcome::Unattainable(Why::NoPressureLeft);
-        }
-        limit = limit.min(usual * left / policy.unproven_drop_kpa);
+    let limit = setup
+        .case
+        .unproven_start_max
+        .unwrap_or_else(|| setup.case.pump.viscosity_start_max.as_mm2_per_s());
+    if limit <= 0.0 {
+        return Outcome::Unattainable(Why::NoPressureLeft);
     }
     thinner_than(setup, edge, limit)
 }
