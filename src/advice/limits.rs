@@ -37,6 +37,35 @@ impl LimitId {
     }
 }
 
+impl LimitId {
+    /// The case keys a limit hangs on, its oil's aside.
+    #[must_use]
+    pub const fn keys(self) -> &'static [&'static str] {
+        match self {
+            Self::PourMargin | Self::LineFlow => &["duty.standing"],
+            Self::ViscosityStart => {
+                &["pump.viscosity_start_max", "suction", "pump.displacement", "site.elevation"]
+            }
+            Self::InletPressureStart => &[
+                "pump.inlet_pressure_start_min",
+                "pump.start_speed",
+                "suction.oil_above_pump",
+                "suction.strainer.at_density",
+                "site.elevation",
+            ],
+            Self::ViscosityWork => &["pump.viscosity_work_max"],
+            Self::InletPressureLight | Self::InletPressureWork => &[
+                "pump.inlet_pressure_work_min",
+                "pump.work_speed",
+                "suction.oil_above_pump",
+                "suction.strainer.at_density",
+                "site.elevation",
+            ],
+            Self::ViscosityMin => &["pump.viscosity_min"],
+        }
+    }
+}
+
 /// Which floor a limit belongs to.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
 pub enum Side {

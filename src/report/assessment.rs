@@ -3,7 +3,7 @@
 use super::document::{Block, Document, Line};
 use super::units::{Shown, fixed};
 use crate::advice::{Assessment, Floor, HeatingStatus, LimitResult, Outcome};
-use crate::case::{Case, Units};
+use crate::case::{Assumption, Case, Units};
 use crate::heat::HeatPolicy;
 use crate::oil::Oil;
 
@@ -18,22 +18,24 @@ pub fn assessment(case: &Case, oils: &[(&Oil, Assessment)], units: Units) -> Doc
     }
     if !case.assumptions.is_empty() {
         blocks.push(Block::Heading(Line::from("Assumed - confirm")));
-        blocks.push(Block::List(
-            case.assumptions
-                .iter()
-                .enumerate()
-                .map(|(at, assumption)| {
-                    let find = if assumption.ask.is_empty() {
-                        String::new()
-                    } else {
-                        format!("; find it: {}", assumption.ask)
-                    };
-                    Line::from(format!("{}: ", assumption.key))
-                        .figure(assumption.value.clone(), format!("/assumptions/{at}/value"))
-                        .faint(format!(" ({}{find})", assumption.source))
-                })
-                .collect(),
-        ));
+        // Those that a floor hangs on first.
+        let governs = |key: &str| oils.iter().any(|(_, found)| found.hangs_on(key));
+        let mut rows: Vec<_> = case.assumptions.iter().enumerate().collect();
+        rows.sort_by_key(|(_, assumption)| !governs(&assumption.key));
+        let line = |(at, assumption): (usize, &Assumption)| {
+            let mut line = Line::from(format!("{}: ", assumption.key))
+                .figure(assumption.value.clone(), format!("/assumptions/{at}/value"));
+            if governs(&assumption.key) {
+                line = line.strong(", a floor hangs on it");
+            }
+            let find = if assumption.ask.is_empty() {
+                String::new()
+            } else {
+                format!("; find it: {}", assumption.ask)
+            };
+            line.faint(format!(" ({}{find})", assumption.source))
+        };
+        blocks.push(Block::List(rows.into_iter().map(line).collect()));
     }
     blocks.push(Block::Text(Line::from(
         "Judged is the hydraulic system only, on the thick edge of the likely viscosity. Rates of that \
