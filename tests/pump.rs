@@ -326,3 +326,21 @@ proptest! {
         }
     }
 }
+
+#[test]
+fn the_hump_of_the_transition_is_bounded() {
+    // What the search for inlet limits relies on; Churchill 1977.
+    for roughness in [0.0, 1e-4, 1e-3, 0.005] {
+        let mut re = 2000.0;
+        while re < 1e6 {
+            assert!(friction_factor(re, roughness) < 0.051, "{roughness} at {re}");
+            re *= 1.01;
+        }
+    }
+    // The hump is where the flow loses more than on either side of it.
+    let inlet = B.inlet(SEA, false);
+    let q = B.flow(2100.0);
+    let hump = inlet.hump_viscosity(q);
+    let at = |nu: f64| inlet.pressure_kpa(q, nu, 870.0);
+    assert!(at(hump) < at(0.8 * hump) && at(hump) < at(1.25 * hump), "{hump}");
+}

@@ -1,7 +1,7 @@
 //! The first tier: one oil in one case.
 
 use super::first_turn::{self, Circulation, FirstTurn};
-use super::heating::{self, Heating, Tank};
+use super::heating::{self, Heating, HeatingStatus, Tank};
 use super::limits::{Edge, LIMITS, LimitId, Outcome, Side};
 use super::setup::Setup;
 use crate::case::{Case, FluidKind};
@@ -173,7 +173,9 @@ pub fn assess(case: &Case, oil: &Oil) -> Assessment {
     let heating = heating::heating(&setup, &tank, start_floor.at_c, gels);
     let gate = start_floor.at_c.map(|floor| floor + case.policy.heat.gate_margin_k);
     let first_turn = first_turn::first_turn(&setup, gate, work_floor.at_c, heating.thermostat_c);
-    let tank_c = heating.mean_target_c.unwrap_or(tank.soak_c);
+    // Heat that cannot be brought in is not counted on.
+    let reached = heating.mean_target_c.filter(|_| heating.status != HeatingStatus::CannotReach);
+    let tank_c = reached.unwrap_or(tank.soak_c);
     let circulation =
         first_turn::circulation(&setup, &tank, tank_c, start_floor.at_c, work_floor.at_c);
     let low_at_max = oil.low(case.duty.oil_temperature_max.as_celsius());

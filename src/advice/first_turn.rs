@@ -73,29 +73,28 @@ pub(super) fn first_turn(
             drain.flow.as_litres_per_min() / 60_000.0,
         ));
     }
-    let Some(inlet) = &setup.inlet else {
-        turn.why = Some(if setup.case.suction.is_none() {
-            "the suction line is not given"
-        } else {
-            "the pump displacement is not given"
-        });
+    let Some(line) = &setup.case.suction else {
+        turn.why = Some("the suction line is not given");
         return turn;
     };
-    let line = inlet.line();
     let least = pump.inlet_start_min.as_kpa();
     let start_rpm = pump.start_speed.as_rpm();
     let dp = (setup.atmosphere_kpa - least) * 1000.0 + rho * GRAVITY * line.head_m();
     if let Some(mu) = mu {
         if dp > 0.0 {
-            let velocity = setup.flow_per_rpm * start_rpm / line.area_m2();
             turn.hose_clearing_s =
                 Some(pump::clearing_time(mu, line.length_m(), dp, line.bore_m()));
-            turn.hose_fill =
-                Some(pump::initial_fill(mu, line.length_m(), dp, line.bore_m(), velocity));
+            let velocity = setup.flow_per_rpm * start_rpm / line.area_m2();
+            turn.hose_fill = (velocity > 0.0)
+                .then(|| pump::initial_fill(mu, line.length_m(), dp, line.bore_m(), velocity));
         } else {
             turn.why = Some("the air pressure leaves nothing over the pump's limit");
         }
     }
+    let Some(inlet) = &setup.inlet else {
+        turn.why = Some("the pump displacement is not given");
+        return turn;
+    };
     let Some(gate) = gate else {
         turn.why = Some("there is no start floor");
         return turn;

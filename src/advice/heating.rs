@@ -50,6 +50,7 @@ pub enum HeatingWhy {
     SurfaceTooSmall,
     NoHeaterSize,
     SkinTooHot,
+    BelowPour,
     CircuitTooSmall,
     WattDensity,
 }
@@ -70,6 +71,7 @@ impl HeatingWhy {
             Self::SurfaceTooSmall => "pad-surface-too-small",
             Self::NoHeaterSize => "no-heater-size",
             Self::SkinTooHot => "skin-too-hot",
+            Self::BelowPour => "below-pour",
             Self::CircuitTooSmall => "circuit-too-small",
             Self::WattDensity => "watt-density",
         }
@@ -93,6 +95,7 @@ impl HeatingWhy {
             Self::TooSlow => "it takes longer than the time there is",
             Self::SurfaceTooSmall => "the flat surface is too small for a pad of that power",
             Self::NoHeaterSize => "not even three of the largest heater size give the power",
+            Self::BelowPour => "no immersion element may be used in oil at or below its pour point",
             Self::SkinTooHot => "no watt density keeps the skin under its limits in this oil",
             Self::CircuitTooSmall => "the circuit does not carry it",
             Self::WattDensity => "its watt density is over what this oil stands",
@@ -314,6 +317,9 @@ pub(super) fn heating(
         oil: OilFilm { curve: setup.oil.curve(), bulk: setup.bulk },
         diameter: element.diameter.as_mm() / 1000.0,
     };
+    // No immersion element in oil at or below its pour point: it cannot carry the heat away.
+    let solid =
+        !pad && setup.oil.pour_point().is_some_and(|pour| setup.soak_c <= pour.as_celsius());
     let density_max = if pad {
         policy.pad_density
     } else {
@@ -322,7 +328,9 @@ pub(super) fn heating(
         let flash = setup.oil.flash_point().map(|flash| flash.as_celsius());
         rod.greatest_density(cap, thermostat, setup.soak_c, flash, policy)
     };
-    if density_max <= 0.0 {
+    if solid {
+        fails.push(HeatingWhy::BelowPour);
+    } else if density_max <= 0.0 {
         fails.push(HeatingWhy::SkinTooHot);
     }
 
@@ -345,7 +353,7 @@ pub(super) fn heating(
     heating.mean_target_c = Some(target);
     heating.thermostat_c = Some(thermostat);
     heating.pump_warming = pump_warming;
-    heating.watt_density_max = Some(density_max);
+    heating.watt_density_max = (!solid).then_some(density_max);
     if figures {
         heating.needed_w = Some(needed);
         heating.needed_high_w = Some(needed_high);

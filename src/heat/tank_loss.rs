@@ -139,13 +139,15 @@ impl<'a> TankLoss<'a> {
     /// Loss per kelvin over the air, W/K, at several oil temperatures in °C, each solved from the
     /// one before.
     pub(super) fn ua_along(&self, temperatures: impl Iterator<Item = f64>, out: &mut [f64]) {
-        let mut guess = GUESS;
+        // Each guess goes on from the two nodes before it.
+        let (mut last, mut guess) = (None, GUESS);
         for (ua, oil_c) in out.iter_mut().zip(temperatures) {
             *ua = match self.way {
                 Way::Fixed(ua, _) => ua,
                 Way::Films(walls, oil, share) => {
                     let (u, outside) = film_u(walls, oil, oil_c, self.air_c, guess);
-                    guess = outside;
+                    guess = (2.0 * outside - last.unwrap_or(outside)).clamp(1e-3, 1.0);
+                    last = Some(outside);
                     share * u * self.area
                 }
             };

@@ -110,7 +110,7 @@ impl Inlet {
         let (mut a, mut b) = (2000_f64.ln(), 10_000_f64.ln());
         let (mut c, mut d) = (b - ratio * (b - a), a + ratio * (b - a));
         let (mut fc, mut fd) = (loss(c), loss(d));
-        while b - a > 1e-3 {
+        while b - a > 0.02 {
             if fc > fd {
                 (b, d, fd) = (d, c, fc);
                 c = b - ratio * (b - a);

@@ -113,6 +113,12 @@ impl SuctionLine {
         }
     }
 
+    /// Relative roughness 0.005 and less: the friction factor stays under 0.051 over Re 2000.
+    #[must_use]
+    pub fn is_smooth(&self) -> bool {
+        self.roughness <= 0.005
+    }
+
     /// Inside diameter, m.
     #[must_use]
     pub const fn bore_m(&self) -> f64 {

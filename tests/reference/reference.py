@@ -554,8 +554,9 @@ def assess(case, data):
                    else 1.2 if high >= 500 else 1.55)
             diameter = get(element, "diameter", 10) / 1000
             density = greatest_density(oil, diameter, cap, heating["thermostat_c"], soak, oil.flash)
-            heating["watt_density_max_w_cm2"] = density
-            if density > 0:
+            solid = oil.pour is not None and soak <= oil.pour
+            heating["watt_density_max_w_cm2"] = None if solid else density
+            if density > 0 and not solid:
                 heating["skin_film_at_max_c"] = skin(oil, diameter, density,
                                                      heating["thermostat_c"], True)
                 heating["skin_bulk_at_max_c"] = skin(oil, diameter, density, soak, False)
@@ -569,11 +570,13 @@ def assess(case, data):
     if drain and mu is not None:
         turn["case_drain_kpa"] = (128 * mu * get(drain, "length") * get(drain, "flow") / 60000
                                   / (math.pi * (get(drain, "bore") / 1000) ** 4) / 1000)
-    if pump.known:
+    if pump.suction is not None:
         dp = (pump.p_atm - pump.p_start) * 1000 + oil.rho(soak) * G * pump.head
         if mu is not None and dp > 0:
-            v = pump.flow(pump.n_start) / (math.pi / 4 * pump.bore**2)
             turn["hose_clearing_s"] = 16 * mu * pump.length**2 / (dp * pump.bore**2)
+    if pump.known:
+        if mu is not None and dp > 0:
+            v = pump.flow(pump.n_start) / (math.pi / 4 * pump.bore**2)
             turn["hose_fill"] = dp * pump.bore**2 / (32 * mu * pump.length * v)
         if start is not None:
             gate = start + 3
@@ -599,7 +602,7 @@ def assess(case, data):
         if loss is not None:
             steady = ambient + heat / loss
             circulation["steady_c"] = steady
-            warm = target if target is not None else tank_soak
+            warm = target if heating["status"] == "sized" else tank_soak
             mixed = (tank.c(15.0) * warm + rest15 * soak) / (tank.c(15.0) + rest15)
             if work is not None:
                 if mixed >= work:
