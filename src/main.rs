@@ -1,2 +1,7 @@
-//! The program.
-fn main() {}
+//! The program: arguments in, exit code out.
+
+mod cli;
+
+fn main() -> std::process::ExitCode {
+    cli::main()
+}

@@ -152,7 +152,9 @@ impl std::fmt::Display for Why {
             Self::NoDisplacement => "the pump displacement is not given",
             Self::TooThick => "too thick at every temperature searched",
             Self::InletTooLow => "the inlet pressure stays under the limit even with hot oil",
-            Self::NoPressureLeft => "the air pressure at this elevation leaves nothing over the pump's limit",
+            Self::NoPressureLeft => {
+                "the air pressure at this elevation leaves nothing over the pump's limit"
+            }
             Self::TypicalLimitDoesNotFit => {
                 "the typical limit is missed even by hot oil, so it does not fit this machine"
             }
@@ -202,7 +204,12 @@ pub static VISCOSITY_FLOOR: Method = Method {
 
 /// The limits, in the order in which a tie is decided.
 pub static LIMITS: &[LimitRow] = &[
-    LimitRow { id: LimitId::PourMargin, side: Side::Start, method: &POUR_MARGIN, find: pour_margin },
+    LimitRow {
+        id: LimitId::PourMargin,
+        side: Side::Start,
+        method: &POUR_MARGIN,
+        find: pour_margin,
+    },
     LimitRow {
         id: LimitId::ViscosityStart,
         side: Side::Start,
@@ -330,14 +337,28 @@ fn inlet(setup: &Setup<'_>, edge: Edge, rpm: f64, least_kpa: f64, assumed: bool)
             return Outcome::NotChecked(Why::TypicalLimitDoesNotFit);
         }
     }
+    // The logarithm of what may be lost over what is lost: nearly straight in temperature.
     let margin = |t: f64| {
-        line.pressure_kpa(q, setup.viscosity(edge, t), setup.bulk.density(t)) - least_kpa
+        let balance = line.balance(q, setup.viscosity(edge, t), setup.bulk.density(t));
+        let full = balance.tank + balance.head;
+        let (spare, lost) = (full - least_kpa, full - balance.pressure);
+        if spare > 0.0 { (spare / lost).ln() } else { -1.0 }
     };
     let (from, to) = (setup.bottom_c, setup.case.policy.limits.search_to_c);
     if margin(to) < 0.0 {
         return Outcome::Unattainable(Why::InletTooLow);
     }
     let mut met = to;
+    // Where even the worst of the transition region leaves enough, start where the flow is laminar.
+    let worst =
+        line.lower_bound_kpa(q, LAMINAR_BELOW, setup.bulk.density(to), setup.bulk.density(from));
+    if worst.is_some_and(|worst| worst >= least_kpa) {
+        let laminar = |t: f64| (line.reynolds(q, setup.viscosity(edge, t)) / LAMINAR_BELOW).ln();
+        if laminar(from) >= 0.0 {
+            return Outcome::NeverBites { to: from };
+        }
+        met = solve::root(laminar, from, to, 1e-3).unwrap_or(to);
+    }
     while met > from && line.reynolds(q, setup.viscosity(edge, met)) > LAMINAR_BELOW {
         let next = (met - 1.0).max(from);
         if margin(next) < 0.0 {
@@ -356,7 +377,8 @@ const LAMINAR_BELOW: f64 = 1500.0;
 
 fn crossing(margin: impl Fn(f64) -> f64, missed: f64, met: f64) -> Outcome {
     // A root is there by construction; not finding one would mean the balance is no number.
-    solve::root(margin, missed, met, CLOSE).map_or(Outcome::Unattainable(Why::InletTooLow), Outcome::At)
+    solve::root(margin, missed, met, CLOSE)
+        .map_or(Outcome::Unattainable(Why::InletTooLow), Outcome::At)
 }
 
 fn viscosity_min(setup: &Setup<'_>, _: Edge) -> Outcome {

@@ -12,8 +12,9 @@ mod first_turn;
 mod heating;
 pub mod limits;
 mod setup;
+pub use setup::Setup;
 
-pub use assess::{Assessment, Floor, Reason, Verdict, assess};
+pub use assess::{Assessment, Floor, LimitResult, Reason, Verdict, assess};
 pub use first_turn::{Circulation, FirstTurn, SpeedStep};
 pub use heating::{Fitted, Heating, HeatingStatus, HeatingWhy};
 pub use limits::{Edge, LIMITS, LimitId, LimitRow, Outcome, Side, Why};

@@ -29,7 +29,11 @@ impl Clock {
         let days = (-rounded / 1440.0).ceil().max(0.0);
         let minutes = rounded + days * 1440.0;
         // Both are whole, not negative and small: at most 1439 minutes and some hundred days.
-        #[allow(clippy::cast_possible_truncation, clippy::cast_sign_loss, reason = "whole and small")]
+        #[allow(
+            clippy::cast_possible_truncation,
+            clippy::cast_sign_loss,
+            reason = "whole and small"
+        )]
         (Self { minutes: minutes as u16 % 1440 }, days as u32)
     }
 }

@@ -60,10 +60,9 @@ impl CaseFile {
         let reader = Reader { name, text };
         let (table, errors) = DeTable::parse_recoverable(text);
         for error in errors {
-            let place = error.span().map_or_else(
-                || Place::Whole { name: name.to_owned() },
-                |span| reader.place(&span),
-            );
+            let place = error
+                .span()
+                .map_or_else(|| Place::Whole { name: name.to_owned() }, |span| reader.place(&span));
             file.faults.push(Fault {
                 place,
                 key: "file".to_owned(),
@@ -129,8 +128,7 @@ impl CaseFile {
 
     /// `oil.KEY` to `oil[n].KEY`; other keys as they are.
     fn resolve(&mut self, key: &str) -> Result<String, Fault> {
-        let fault =
-            |message| Err(Fault { place: Place::Set, key: key.to_owned(), message });
+        let fault = |message| Err(Fault { place: Place::Set, key: key.to_owned(), message });
         if let Some(rest) = key.strip_prefix("oil.") {
             let in_service: Vec<usize> = (1..=self.oils)
                 .filter(|n| self.text(&format!("oil[{n}].in_service")) == Some("true"))
@@ -219,7 +217,13 @@ impl CaseFile {
                                 let section = format!("oil[{}]", self.oils);
                                 self.table(reader, &section, table);
                             }
-                            other => self.wrong(reader, path, &item.span(), "a table headed `[[oil]]`", other),
+                            other => self.wrong(
+                                reader,
+                                path,
+                                &item.span(),
+                                "a table headed `[[oil]]`",
+                                other,
+                            ),
                         }
                     }
                 }

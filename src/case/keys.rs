@@ -1,7 +1,7 @@
 //! The one table of case keys: path, kind, need, example, question, where to find it.
 //!
 //! Reading, `--set`, messages and the key list of the README come from here. The `policy` keys are
-//! rows of [`super::policy`] and are listed with these by [`all`].
+//! rows of the policy table and are listed with these by [`all`].
 
 use super::policy;
 use crate::quantity::{self, Kind, Quantity};
@@ -71,11 +71,9 @@ impl Key {
             KeyKind::Text => "text in quotes".to_owned(),
             KeyKind::Switch => "true or false".to_owned(),
             KeyKind::Whole => "a whole number".to_owned(),
-            KeyKind::Number(least, greatest) => format!(
-                "a number from {} to {}",
-                quantity::shown(least),
-                quantity::shown(greatest)
-            ),
+            KeyKind::Number(least, greatest) => {
+                format!("a number from {} to {}", quantity::shown(least), quantity::shown(greatest))
+            }
             KeyKind::Choice(words) => format!("one of {}", words.join(", ")),
             KeyKind::Quantity(kind) => format!("a {} in quotes", kind.noun),
             KeyKind::Viscosity => "a viscosity in quotes".to_owned(),

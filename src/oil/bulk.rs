@@ -42,7 +42,7 @@ impl Bulk {
     #[must_use]
     pub fn from_density_15(density: Density) -> Self {
         let rho15 = density.as_kg_per_m3();
-        let d = density_at(rho15, 140.0 / 9.0) / WATER_60F;
+        let d = rho15 / WATER_60F;
         Self { rho15, d, sqrt_d: d.sqrt() }
     }
 
@@ -52,7 +52,7 @@ impl Bulk {
         self.rho15
     }
 
-    /// Specific gravity 60/60 °F.
+    /// Specific gravity 60/60 °F; the change of density from 15 °C to 60 °F, 0.04 %, is left out.
     #[must_use]
     pub const fn specific_gravity(&self) -> f64 {
         self.d

@@ -18,5 +18,3 @@ pub use class::{Class, typical_flash};
 pub use data::{Estimate, Oil, OilData, OilError};
 pub use viscosity_index::{D2270, reference_oils, reported, viscosity_at_100, viscosity_index};
 pub use walther::{CurveError, D341, Line, VALID, ViscosityCurve, nu, z};
-
-pub(crate) use walther::ZERO_C;

@@ -35,7 +35,7 @@ static TABLE: LazyLock<Vec<[f64; 3]>> = LazyLock::new(|| {
 /// From 2 to 70 by linear interpolation in table 1, above by the equations of 5.1.2.
 #[must_use]
 pub fn reference_oils(y: f64) -> Option<(f64, f64)> {
-    if !(y >= 2.0) || !y.is_finite() {
+    if y.is_nan() || y < 2.0 || y.is_infinite() {
         return None;
     }
     if y > 70.0 {
@@ -64,7 +64,7 @@ pub fn reference_oils(y: f64) -> Option<(f64, f64)> {
 #[must_use]
 pub fn viscosity_index(u: f64, y: f64) -> Option<f64> {
     let (l, h) = reference_oils(y)?;
-    if !(u > 0.0) || !u.is_finite() {
+    if u.is_nan() || u <= 0.0 || u.is_infinite() {
         return None;
     }
     Some(if u >= h {

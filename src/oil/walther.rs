@@ -11,7 +11,7 @@ pub static D341: Method = Method {
 };
 
 /// 0 °C in kelvin.
-pub(crate) const ZERO_C: f64 = 273.15;
+const ZERO_C: f64 = 273.15;
 /// Lowest and highest viscosity the one-term form is stated for, mm²/s. ASTM D341-20 (memory).
 pub const VALID: std::ops::RangeInclusive<f64> = 0.21..=2e7;
 
@@ -65,17 +65,31 @@ impl Line {
     /// Viscosity at a temperature: °C in, mm²/s out.
     #[must_use]
     pub fn at(self, celsius: f64) -> f64 {
-        self.at_log_t((celsius + ZERO_C).log10())
+        self.in_ln().at(celsius + ZERO_C)
     }
 
-    fn at_log_t(self, log_t: f64) -> f64 {
-        nu(10_f64.powf(10_f64.powf(self.a - self.b * log_t)))
+    fn in_ln(self) -> LnLine {
+        let ln10 = std::f64::consts::LN_10;
+        LnLine { a: self.a * ln10 + ln10.ln(), b: self.b }
     }
 
     /// Temperature, °C, at which the line reaches a viscosity in mm²/s.
     #[must_use]
     pub fn temperature_at(self, nu: f64) -> f64 {
         10_f64.powf((self.a - w(nu)) / self.b) - ZERO_C
+    }
+}
+
+/// The same line in natural logarithms, `Z = exp(exp(a - b ln T))`: half the work to evaluate.
+#[derive(Debug, Clone, Copy, PartialEq)]
+struct LnLine {
+    a: f64,
+    b: f64,
+}
+
+impl LnLine {
+    fn at(self, kelvin: f64) -> f64 {
+        nu((self.a - self.b * kelvin.ln()).exp().exp())
     }
 }
 
@@ -125,8 +139,10 @@ pub enum CurveError {
 pub struct ViscosityCurve {
     /// (°C, mm²/s), coldest first.
     points: Vec<(f64, f64)>,
-    /// One line a gap, coldest first, with log10 of its warm end in K.
-    lines: Vec<(Line, f64)>,
+    /// One line a gap, coldest first.
+    lines: Vec<Line>,
+    /// The same, ready to evaluate, with the warm end in °C.
+    ready: Vec<(LnLine, f64)>,
 }
 
 impl ViscosityCurve {
@@ -170,23 +186,20 @@ impl ViscosityCurve {
                     warm_at: warm.0,
                 });
             }
-            lines.push((Line::through(*cold, *warm), (warm.0 + ZERO_C).log10()));
+            lines.push(Line::through(*cold, *warm));
         }
-        Ok(Self { points, lines })
+        let warm_ends = points.iter().skip(1).map(|point| point.0);
+        let ready = lines.iter().map(|line| line.in_ln()).zip(warm_ends).collect();
+        Ok(Self { points, lines, ready })
     }
 
     /// Viscosity at a temperature: °C in, mm²/s out. Extended beyond the points; how far is the
     /// business of the [band](crate::oil).
     #[must_use]
     pub fn at(&self, celsius: f64) -> f64 {
-        let log_t = (celsius + ZERO_C).log10();
-        self.line(log_t).at_log_t(log_t)
-    }
-
-    fn line(&self, log_t: f64) -> Line {
-        let found = self.lines.iter().find(|(_, warm_end)| log_t <= *warm_end);
+        let found = self.ready.iter().find(|(_, warm_end)| celsius <= *warm_end);
         // Invariant: a curve has at least one line.
-        found.or(self.lines.last()).map_or(Line { a: 0.0, b: 0.0 }, |(line, _)| *line)
+        found.or(self.ready.last()).map_or(f64::NAN, |(line, _)| line.at(celsius + ZERO_C))
     }
 
     /// The coldest measured point: (°C, mm²/s).
@@ -209,6 +222,6 @@ impl ViscosityCurve {
 
     /// The lines between the points, coldest first.
     pub fn lines(&self) -> impl Iterator<Item = Line> + '_ {
-        self.lines.iter().map(|(line, _)| *line)
+        self.lines.iter().copied()
     }
 }

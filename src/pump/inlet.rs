@@ -96,6 +96,26 @@ impl Inlet {
         self.balance(q, nu, rho).pressure
     }
 
+    /// A pressure, kPa, that the port never falls under while the Reynolds number is `re` or more and
+    /// the density lies between two values; `None` where the hose is too rough to say.
+    ///
+    /// Over Re 1500 the friction factor of a hose of relative roughness 0.01 and less stays under
+    /// 0.06 (Churchill 1977); fittings and strainer lose most at the least Reynolds number.
+    #[must_use]
+    pub fn lower_bound_kpa(&self, q: f64, re: f64, rho_least: f64, rho_most: f64) -> Option<f64> {
+        let line = &self.line;
+        if line.roughness > 0.01 || re < 1500.0 {
+            return None;
+        }
+        let v = q / line.area;
+        let nu = v * line.bore / re;
+        let loss = 0.06 * line.length / line.bore + line.k1 / re + line.kinf + line.velocity_factor;
+        let strainer = (line.strainer * nu * rho_most * q).min(line.strainer_most);
+        let rho_head = if line.head >= 0.0 { rho_least } else { rho_most };
+        let lost = 0.5 * rho_most * v * v * loss + strainer;
+        Some(self.tank_kpa + (rho_head * GRAVITY * line.head - lost) / 1000.0)
+    }
+
     /// The largest viscosity, mm²/s, up to which every thinner oil in laminar flow keeps the port at
     /// `least_kpa` or more; `None` where none does.
     ///

@@ -280,9 +280,8 @@ macro_rules! quantity {
         }
     )*
 
-    /// Every quantity kind there is, for tests that must miss none.
-    #[cfg(test)]
-    pub(super) static ALL: &[&Kind] = &[$($name::KIND),*];
+    /// Every quantity kind there is.
+    pub static KINDS: &[&Kind] = &[$($name::KIND),*];
     };
     (@reader) => { plain };
     (@reader $reader:path) => { $reader };

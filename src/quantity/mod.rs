@@ -15,7 +15,7 @@ mod viscosity;
 
 pub use kinds::{
     AbsolutePressure, Area, Bore, Current, Density, Displacement, Elevation, Flow, GaugePressure,
-    HeatLossRate, HeatTransferCoefficient, Kind, KinematicViscosity, Length, Mass, Power,
+    HeatLossRate, HeatTransferCoefficient, KINDS, Kind, KinematicViscosity, Length, Mass, Power,
     PressureDifference, Quantity, QuantityError, Rotation, Temperature, TemperatureDifference,
     ThermalConductivity, Thickness, TimeSpan, Velocity, Voltage, Volume, WattDensity,
 };

@@ -71,7 +71,7 @@ const GRAVITY: f64 = 9.806_65;
 /// ASTM D1250 / API MPMS 11.1 (quoted).
 pub(crate) const WATER_60F: f64 = 999.016;
 const PSI: f64 = POUND * GRAVITY / (INCH * INCH) / 1000.0;
-const BTU: f64 = 1055.055_852_62;
+const BTU: f64 = 1_055.055_852_62;
 const GALLON: f64 = 3.785_411_784;
 
 /// Base °C. Exact: t/°C = (t/°F - 32) × 5/9. NIST SP 811 (2008), B.8.

@@ -110,9 +110,11 @@ impl<T: Into<String>> From<T> for Line {
 impl Document {
     /// Every JSON pointer the document shows a figure of.
     pub fn pointers(&self) -> impl Iterator<Item = &str> {
-        self.blocks.iter().flat_map(Block::lines).flat_map(|line| &line.0).filter_map(|span| {
-            span.pointer.as_deref()
-        })
+        self.blocks
+            .iter()
+            .flat_map(Block::lines)
+            .flat_map(|line| &line.0)
+            .filter_map(|span| span.pointer.as_deref())
     }
 }
 

@@ -175,7 +175,7 @@ pub fn ascii(text: &str) -> String {
             'ν' => out.push_str("nu"),
             'ρ' => out.push_str("rho"),
             'α' => out.push_str("alpha"),
-            'Δ' => out.push_str("d"),
+            'Δ' => out.push('d'),
             c if c.is_ascii() => out.push(c),
             _ => out.push('?'),
         }

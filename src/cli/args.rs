@@ -1,0 +1,132 @@
+//! What can be typed.
+
+use clap::{Args, Parser, Subcommand, ValueEnum};
+
+/// Cold-start advice for hydraulic machines.
+///
+/// Which oil, which heater and which steps a hydraulic machine needs on the coldest morning.
+#[derive(Debug, Parser)]
+#[command(
+    version,
+    after_help = "Examples:
+  coldsump assess examples/skarn-loader.toml
+  coldsump assess examples/skarn-loader.toml --set \"site.minimum_temperature=-30 °C\"
+  coldsump oil HM-46 --at \"-40..100 °C by 10\"
+
+Exit codes: 0 answered, 1 internal or I/O failure, 2 wrong input or call, 130 interrupted."
+)]
+pub(crate) struct Cli {
+    #[command(subcommand)]
+    pub(crate) command: Option<Command>,
+    #[command(flatten)]
+    pub(crate) look: LookArgs,
+}
+
+#[derive(Debug, Args)]
+pub(crate) struct LookArgs {
+    /// When to use colour
+    #[arg(long, global = true, value_enum, default_value = "auto", value_name = "WHEN")]
+    pub(crate) color: ColorWhen,
+    /// Use only ASCII characters
+    #[arg(long, global = true)]
+    pub(crate) ascii: bool,
+    /// Never ask anything
+    #[arg(long, global = true)]
+    pub(crate) no_input: bool,
+}
+
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub(crate) enum ColorWhen {
+    Auto,
+    Always,
+    Never,
+}
+
+#[derive(Debug, Subcommand)]
+pub(crate) enum Command {
+    /// Every oil of a case: viscosity at the soak, limits, floors, heating
+    #[command(after_help = "Examples:
+  coldsump assess loader.toml
+  coldsump assess loader.toml --format json
+  coldsump assess loader.toml --set \"suction.bore=63.5 mm\" --oil \"oil in service\"
+  coldsump assess *.toml --format json        one line a case
+  cat loader.toml | coldsump assess -")]
+    Assess(AssessArgs),
+    /// One oil over temperature
+    #[command(after_help = "Examples:
+  coldsump oil HM-46 --at \"-40..100 °C by 10\"
+  coldsump oil --viscosity \"40 °C=32 mm²/s\" --viscosity \"100 °C=6.3 mm²/s\" \\
+      --base polymer-thickened --pour-point \"-39 °C\" --at \"-30 °C\"
+  coldsump oil --file loader.toml --at \"-40..0 °C by 5\" --format csv")]
+    Oil(OilArgs),
+}
+
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub(crate) enum AssessFormat {
+    Text,
+    Json,
+}
+
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub(crate) enum OilFormat {
+    Text,
+    Json,
+    Csv,
+}
+
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub(crate) enum UnitsArg {
+    Metric,
+    Us,
+}
+
+#[derive(Debug, Args)]
+pub(crate) struct AssessArgs {
+    /// Case files; `-` reads standard input
+    #[arg(required = true, value_name = "CASE")]
+    pub(crate) cases: Vec<std::path::PathBuf>,
+    /// How to write the answer
+    #[arg(long, value_enum, default_value = "text")]
+    pub(crate) format: AssessFormat,
+    /// Units to show
+    #[arg(long, value_enum)]
+    pub(crate) units: Option<UnitsArg>,
+    /// Only oils of this name; may be repeated
+    #[arg(long, value_name = "NAME")]
+    pub(crate) oil: Vec<String>,
+    /// Set a key of the case, `none` takes it out; may be repeated
+    #[arg(long, value_name = "KEY=VALUE")]
+    pub(crate) set: Vec<String>,
+}
+
+#[derive(Debug, Args)]
+#[group(id = "which", required = true, multiple = false, args = ["class", "file", "viscosity"])]
+pub(crate) struct OilArgs {
+    /// A built-in class, such as HM-46
+    #[arg(value_name = "CLASS")]
+    pub(crate) class: Option<String>,
+    /// All oils of a case file
+    #[arg(long, value_name = "CASE")]
+    pub(crate) file: Option<std::path::PathBuf>,
+    /// A data-sheet viscosity, "40 °C=46 mm²/s"; at least two
+    #[arg(long, value_name = "T=VISCOSITY")]
+    pub(crate) viscosity: Vec<String>,
+    /// What the oil is made from
+    #[arg(long, value_name = "BASE", requires = "viscosity")]
+    pub(crate) base: Option<String>,
+    /// Pour point
+    #[arg(long, value_name = "T", requires = "viscosity", allow_hyphen_values = true)]
+    pub(crate) pour_point: Option<String>,
+    /// Density at 15 °C
+    #[arg(long, value_name = "D", requires = "viscosity")]
+    pub(crate) density: Option<String>,
+    /// Temperatures: "-40..100 °C by 10", or one: "-30 °C"
+    #[arg(long, value_name = "RANGE", allow_hyphen_values = true)]
+    pub(crate) at: String,
+    /// How to write the answer
+    #[arg(long, value_enum, default_value = "text")]
+    pub(crate) format: OilFormat,
+    /// Units to show
+    #[arg(long, value_enum)]
+    pub(crate) units: Option<UnitsArg>,
+}

@@ -1,0 +1,47 @@
+//! Arguments, commands, exit codes: thin.
+
+mod args;
+mod assess;
+mod oil;
+mod output;
+
+use args::{Cli, Command};
+use clap::Parser;
+use std::process::ExitCode;
+
+/// Advice given, and a plan starts the machine.
+pub(crate) const DONE: u8 = 0;
+/// Internal or I/O failure.
+pub(crate) const FAILED: u8 = 1;
+/// Wrong input or call; good cases are still answered.
+pub(crate) const WRONG: u8 = 2;
+
+pub(crate) fn main() -> ExitCode {
+    let cli = Cli::parse();
+    let done = match cli.command {
+        None => {
+            eprintln!("coldsump: which oil, which heater, which steps on the coldest morning\n");
+            eprintln!("try: coldsump assess CASE.toml");
+            eprintln!("try: coldsump oil HM-46 --at \"-40..100 °C by 10\"");
+            eprintln!("try: coldsump --help");
+            Ok(WRONG)
+        }
+        Some(Command::Assess(args)) => assess::run(&args, &cli.look),
+        Some(Command::Oil(args)) => oil::run(&args, &cli.look),
+    };
+    match done {
+        Ok(code) => ExitCode::from(code),
+        // A reader that has read enough, such as `head`, is no failure.
+        Err(error) if closed_pipe(&error) => ExitCode::from(DONE),
+        Err(error) => {
+            eprintln!("coldsump: {error:#}");
+            ExitCode::from(FAILED)
+        }
+    }
+}
+
+fn closed_pipe(error: &anyhow::Error) -> bool {
+    error
+        .downcast_ref::<std::io::Error>()
+        .is_some_and(|error| error.kind() == std::io::ErrorKind::BrokenPipe)
+}

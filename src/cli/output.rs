@@ -1,0 +1,91 @@
+//! Standard output, colour, and files read.
+
+use super::args::{ColorWhen, LookArgs, UnitsArg};
+use anyhow::{Context, Result};
+use coldsump::case::Units;
+use coldsump::report::Look;
+use std::io::{IsTerminal, Read, Write};
+use std::path::Path;
+
+/// The look of standard output: the option, then `NO_COLOR`, `CLICOLOR_FORCE`, `CLICOLOR=0`,
+/// `TERM=dumb`, then whether it is a terminal.
+pub(crate) fn look(args: &LookArgs) -> Look {
+    let var = |name: &str| std::env::var(name).ok();
+    let color = color(args.color, var, std::io::stdout().is_terminal());
+    Look { color, ascii: args.ascii, width: 80 }
+}
+
+fn color(when: ColorWhen, var: impl Fn(&str) -> Option<String>, terminal: bool) -> bool {
+    let set = |name: &str| var(name).is_some_and(|value| !value.is_empty());
+    match when {
+        ColorWhen::Always => true,
+        ColorWhen::Never => false,
+        ColorWhen::Auto if set("NO_COLOR") => false,
+        ColorWhen::Auto if var("CLICOLOR_FORCE").is_some_and(|v| !v.is_empty() && v != "0") => true,
+        ColorWhen::Auto if var("CLICOLOR").is_some_and(|v| v == "0") => false,
+        ColorWhen::Auto if var("TERM").is_some_and(|v| v == "dumb") => false,
+        ColorWhen::Auto => terminal,
+    }
+}
+
+pub(crate) fn units(arg: Option<UnitsArg>) -> Option<Units> {
+    arg.map(|units| match units {
+        UnitsArg::Metric => Units::Metric,
+        UnitsArg::Us => Units::Us,
+    })
+}
+
+/// Writes to standard output.
+pub(crate) fn put(text: &str) -> Result<()> {
+    let mut out = std::io::stdout().lock();
+    out.write_all(text.as_bytes())?;
+    out.flush()?;
+    Ok(())
+}
+
+/// The text of a file and the name messages call it by; `-` is standard input.
+pub(crate) fn read(path: &Path) -> Result<(String, String)> {
+    let (name, bytes) = if path == Path::new("-") {
+        let mut bytes = Vec::new();
+        std::io::stdin().read_to_end(&mut bytes).context("cannot read standard input")?;
+        ("standard input".to_owned(), bytes)
+    } else {
+        let name = path.display().to_string();
+        let bytes = std::fs::read(path).with_context(|| format!("cannot read {name}"))?;
+        (name, bytes)
+    };
+    let text = String::from_utf8(bytes)
+        .map_err(|error| error.utf8_error())
+        .with_context(|| format!("{name} is not UTF-8 text"))?;
+    Ok((name, text))
+}
+
+#[cfg(test)]
+mod tests {
+    use super::{ColorWhen, color};
+
+    #[test]
+    fn colour_follows_its_order() {
+        // (option, variables, terminal, colour)
+        type Row<'a> = (ColorWhen, &'a [(&'a str, &'a str)], bool, bool);
+        let rows: &[Row<'_>] = &[
+            (ColorWhen::Auto, &[], true, true),
+            (ColorWhen::Auto, &[], false, false),
+            (ColorWhen::Auto, &[("NO_COLOR", "1")], true, false),
+            (ColorWhen::Auto, &[("NO_COLOR", "")], true, true),
+            (ColorWhen::Auto, &[("NO_COLOR", "1"), ("CLICOLOR_FORCE", "1")], false, false),
+            (ColorWhen::Auto, &[("CLICOLOR_FORCE", "1")], false, true),
+            (ColorWhen::Auto, &[("CLICOLOR_FORCE", "0")], false, false),
+            (ColorWhen::Auto, &[("CLICOLOR", "0")], true, false),
+            (ColorWhen::Auto, &[("TERM", "dumb")], true, false),
+            (ColorWhen::Always, &[("NO_COLOR", "1")], false, true),
+            (ColorWhen::Never, &[("CLICOLOR_FORCE", "1")], true, false),
+        ];
+        for (when, vars, terminal, want) in rows {
+            let var = |name: &str| {
+                vars.iter().find(|(key, _)| *key == name).map(|(_, value)| (*value).to_owned())
+            };
+            assert_eq!(color(*when, var, *terminal), *want, "{when:?} {vars:?} {terminal}");
+        }
+    }
+}

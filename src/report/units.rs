@@ -1,0 +1,153 @@
+//! Figures as people read them, in metric or US units.
+
+use crate::case::Units;
+
+/// Shows figures in one set of units.
+#[derive(Debug, Clone, Copy)]
+pub struct Shown(pub Units);
+
+impl Shown {
+    const fn us(self) -> bool {
+        matches!(self.0, Units::Us)
+    }
+
+    /// A temperature in °C, to a tenth.
+    #[must_use]
+    pub fn temperature(self, celsius: f64) -> String {
+        if self.us() {
+            format!("{} °F", fixed(celsius * 1.8 + 32.0, 1))
+        } else {
+            format!("{} °C", fixed(celsius, 1))
+        }
+    }
+
+    /// A temperature difference in K.
+    #[must_use]
+    pub fn difference(self, kelvin: f64) -> String {
+        if self.us() {
+            format!("{} °F", fixed(kelvin * 1.8, 1))
+        } else {
+            format!("{} K", fixed(kelvin, 1))
+        }
+    }
+
+    /// A viscosity in mm²/s, to two figures: more is not known.
+    #[must_use]
+    pub fn viscosity(self, mm2_s: f64) -> String {
+        format!("{} mm²/s", two_figures(mm2_s))
+    }
+
+    /// A power in W.
+    #[must_use]
+    pub fn power(self, watts: f64) -> String {
+        format!("{} W", fixed(watts, 0))
+    }
+
+    /// A pressure in kPa; inHg beside it where a gauge at the machine reads it.
+    #[must_use]
+    pub fn pressure(self, kpa: f64) -> String {
+        if self.us() {
+            format!("{} psi", fixed(kpa / 6.894_757, 1))
+        } else {
+            format!("{} kPa", fixed(kpa, 1))
+        }
+    }
+
+    /// A vacuum in kPa, with inHg.
+    #[must_use]
+    pub fn vacuum(self, kpa: f64) -> String {
+        format!("{} kPa ({} inHg)", fixed(kpa, 1), fixed(kpa / 3.386_389, 1))
+    }
+
+    /// A time in s, as hours and minutes.
+    #[must_use]
+    pub fn time(self, seconds: f64) -> String {
+        if seconds < 90.0 {
+            return format!("{} s", two_figures(seconds));
+        }
+        let minutes = (seconds / 60.0).round();
+        let hours = (minutes / 60.0).floor();
+        if hours >= 1.0 {
+            format!("{} h {:02} min", hours, minutes - 60.0 * hours)
+        } else {
+            format!("{minutes} min")
+        }
+    }
+
+    /// A watt density in W/cm².
+    #[must_use]
+    pub fn watt_density(self, w_cm2: f64) -> String {
+        if self.us() {
+            format!("{} W/in²", fixed(w_cm2 * 6.451_6, 1))
+        } else {
+            format!("{} W/cm²", fixed(w_cm2, 2))
+        }
+    }
+
+    /// An area in cm².
+    #[must_use]
+    pub fn area(self, cm2: f64) -> String {
+        if self.us() {
+            format!("{} in²", two_figures(cm2 / 6.451_6))
+        } else {
+            format!("{} cm²", two_figures(cm2))
+        }
+    }
+
+    /// A U value in W/(m²·K).
+    #[must_use]
+    pub fn u_value(self, w_m2_k: f64) -> String {
+        if self.us() {
+            format!("{} Btu/(h·ft²·°F)", fixed(w_m2_k / 5.678_263, 2))
+        } else {
+            format!("{} W/(m²·K)", fixed(w_m2_k, 1))
+        }
+    }
+
+    /// A speed in m/s.
+    #[must_use]
+    pub fn wind(self, m_s: f64) -> String {
+        if self.us() {
+            format!("{} mph", fixed(m_s / 0.447_04, 0))
+        } else {
+            format!("{} m/s", fixed(m_s, 1))
+        }
+    }
+}
+
+/// A number with so many decimals, never `-0`.
+#[must_use]
+pub(super) fn fixed(value: f64, decimals: usize) -> String {
+    let text = format!("{value:.decimals$}");
+    if text.trim_start_matches('-').chars().all(|c| c == '0' || c == '.') {
+        return text.trim_start_matches('-').to_owned();
+    }
+    text
+}
+
+/// A number to two significant figures, three from 100 000 up, thousands set apart.
+#[must_use]
+pub(super) fn two_figures(value: f64) -> String {
+    if value <= 0.0 || !value.is_finite() {
+        return fixed(value, 0);
+    }
+    let magnitude = value.log10().floor();
+    let unit = 10_f64.powf(magnitude - 1.0);
+    let rounded = (value / unit).round() * unit;
+    if magnitude < 1.0 {
+        let decimals = if magnitude < 0.0 { 2 } else { 1 };
+        return fixed(rounded, decimals);
+    }
+    let digits = format!("{rounded:.0}");
+    if digits.len() <= 4 {
+        return digits;
+    }
+    let mut out = String::new();
+    for (at, c) in digits.chars().enumerate() {
+        if at > 0 && (digits.len() - at) % 3 == 0 {
+            out.push(' ');
+        }
+        out.push(c);
+    }
+    out
+}

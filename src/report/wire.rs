@@ -1,0 +1,240 @@
+//! The JSON contract: the only place that knows its keys.
+
+use crate::advice::{Assessment, Fitted, Heating, LimitResult, Outcome};
+use crate::case::{Case, From, MinimumHow};
+use crate::oil::{Oil, reported};
+use serde_json::{Map, Value, json};
+
+/// Version of the JSON format: renaming or removing a key raises it.
+const FORMAT: u32 = 1;
+
+/// A number at six significant figures: the one rounding of every JSON figure.
+#[must_use]
+pub fn six(value: f64) -> f64 {
+    if value == 0.0 || !value.is_finite() {
+        return 0.0;
+    }
+    format!("{value:.5e}").parse().unwrap_or(value)
+}
+
+/// Rounds every number, and makes every object with a null say so in its `why`.
+fn finish(value: Value) -> Value {
+    match value {
+        Value::Number(number) if number.is_f64() => {
+            number.as_f64().map_or(Value::Null, |number| json!(six(number)))
+        }
+        Value::Array(list) => Value::Array(list.into_iter().map(finish).collect()),
+        Value::Object(map) => {
+            let mut map: Map<String, Value> =
+                map.into_iter().map(|(key, value)| (key, finish(value))).collect();
+            let nulls: Vec<&str> = map
+                .iter()
+                .filter(|(key, value)| value.is_null() && *key != "why")
+                .map(|(key, _)| key.as_str())
+                .collect();
+            if nulls.is_empty() {
+                if map.get("why").is_some_and(Value::is_null) {
+                    map.remove("why");
+                }
+            } else {
+                let missing = format!("no figure for {}", nulls.join(", "));
+                let why = match map.get("why").and_then(Value::as_str) {
+                    Some(why) => format!("{why} ({missing})"),
+                    None => missing,
+                };
+                map.insert("why".to_owned(), Value::String(why));
+            }
+            Value::Object(map)
+        }
+        other => other,
+    }
+}
+
+/// The assessment of a case as JSON: `oils`, `site`, `assumptions`, `inputs`.
+#[must_use]
+pub fn assessment_json(case: &Case, oils: &[(&Oil, Assessment)]) -> Value {
+    let how = |how: MinimumHow| match how {
+        MinimumHow::Given | MinimumHow::AsMinimum => "given",
+        MinimumHow::Record => "record",
+        MinimumHow::Percentile => "percentile",
+        MinimumHow::ReturnLevel => "return-level",
+        MinimumHow::Class => "class",
+    };
+    finish(json!({
+        "format": FORMAT,
+        "program": { "name": env!("CARGO_PKG_NAME"), "version": env!("CARGO_PKG_VERSION") },
+        "title": case.title,
+        "site": {
+            "minimum_c": case.site.minimum.as_celsius(),
+            "minimum_how": how(case.site.minimum_how),
+            "heating_c": case.site.heating.as_celsius(),
+            "heating_how": how(case.site.heating_how),
+            "air_kpa": crate::air::atmosphere_kpa(case.site.elevation.as_m()),
+            "wind_m_s": case.site.wind.as_m_per_s(),
+        },
+        "oils": oils.iter().map(|(oil, found)| oil_json(oil, found)).collect::<Vec<_>>(),
+        "assumptions": case.assumptions.iter().map(|assumption| json!({
+            "key": assumption.key,
+            "value": assumption.value,
+            "source": assumption.source,
+            "ask": assumption.ask,
+        })).collect::<Vec<_>>(),
+        "inputs": case.inputs.iter().map(|input| json!({
+            "key": input.key,
+            "value": input.value,
+            "from": match input.from {
+                From::Given => "given",
+                From::Typical => "typical",
+                From::Policy => "policy",
+                From::Climate => "climate",
+            },
+        })).collect::<Vec<_>>(),
+    }))
+}
+
+fn oil_json(oil: &Oil, found: &Assessment) -> Value {
+    let at = &found.at_soak;
+    let floor_why = found
+        .start_floor
+        .at_c
+        .is_none()
+        .then_some("start-limit-unattainable")
+        .or(found.work_floor.at_c.is_none().then_some("work-limit-unattainable"));
+    json!({
+        "name": oil.name(),
+        "class": oil.class(),
+        "base": oil.base().id(),
+        "in_service": oil.in_service(),
+        "reference_only": oil.reference_only(),
+        "verdict": found.verdict.id(),
+        "reasons": found.reasons.iter().map(|reason| json!({
+            "id": reason.id, "text": reason.text,
+        })).collect::<Vec<_>>(),
+        "viscosity_index": oil.viscosity_index(),
+        "soak_c": found.soak_c,
+        "tank_soak_c": found.tank_soak_c,
+        "viscosity_at_soak": {
+            "low_mm2_s": at.low,
+            "expected_mm2_s": at.expected,
+            "high_mm2_s": at.high,
+            "reach": at.reach.id(),
+            "why": at.high.is_none().then_some("below the pour point + 5 K the oil has no one viscosity"),
+        },
+        "start_floor_c": found.start_floor.at_c,
+        "start_floor_set_by": found.start_floor.set_by.map(|id| id.id()),
+        "start_floor_expected_c": found.start_floor_expected.at_c,
+        "light_floor_c": found.light_floor.at_c,
+        "light_floor_set_by": found.light_floor.set_by.map(|id| id.id()),
+        "work_floor_c": found.work_floor.at_c,
+        "work_floor_set_by": found.work_floor.set_by.map(|id| id.id()),
+        "work_floor_expected_c": found.work_floor_expected.at_c,
+        "hot_ceiling_c": found.hot_ceiling_c,
+        "viscosity_at_max_low_mm2_s": found.low_at_max,
+        "limits": found.limits.iter().map(limit_json).collect::<Vec<_>>(),
+        "heating": heating_json(&found.heating),
+        "first_turn": {
+            "hose_clearing_s": found.first_turn.hose_clearing_s,
+            "hose_fill": found.first_turn.hose_fill,
+            "pump_difference_k": found.first_turn.pump_difference_k,
+            "vacuum_at_gate_kpa": found.first_turn.vacuum_at_gate_kpa,
+            "speed_max_rpm": found.first_turn.speed_max_rpm,
+            "case_drain_kpa": found.first_turn.case_drain_kpa,
+            "speed_ladder": found.first_turn.speed_ladder.iter().map(|step| json!({
+                "oil_c": step.oil_c, "speed_max_rpm": step.speed_max_rpm,
+            })).collect::<Vec<_>>(),
+            "why": found.first_turn.why,
+        },
+        "circulation": {
+            "time_s": found.circulation.time_s,
+            "steady_c": found.circulation.steady_c,
+            "why": found.circulation.why,
+        },
+        "why": floor_why,
+    })
+}
+
+fn limit_json(result: &LimitResult) -> Value {
+    json!({
+        "limit": result.id.id(),
+        "side": result.side.id(),
+        "status": result.outcome.status(),
+        "temperature_c": result.outcome.temperature(),
+        "met_at_soak": match result.outcome {
+            Outcome::NotChecked(_) => None,
+            _ => result.met_at_soak,
+        },
+        "why": result.outcome.why().map(|why| why.to_string()),
+    })
+}
+
+fn whys(whys: &[crate::advice::HeatingWhy]) -> Option<String> {
+    let ids: Vec<&str> = whys.iter().map(|why| why.id()).collect();
+    (!ids.is_empty()).then(|| ids.join("; "))
+}
+
+fn heating_json(heating: &Heating) -> Value {
+    let mut value = json!({
+        "status": heating.status.id(),
+        "why": whys(&heating.whys),
+        "needed_w": heating.needed_w,
+        "needed_high_w": heating.needed_high_w,
+        "heater_w": heating.heater_w,
+        "elements_w": heating.elements_w,
+        "tight": heating.tight,
+        "time_s": heating.time_s,
+        "time_high_s": heating.time_high_s,
+        "hold_w": heating.hold_w,
+        "energy_kwh": heating.energy_kwh,
+        "u_value_w_m2_k": heating.u_value,
+        "steady_c": heating.steady_c,
+        "mean_target_c": heating.mean_target_c,
+        "thermostat_c": heating.thermostat_c,
+        "gate_valid_s": heating.gate_valid_s,
+        "watt_density_max_w_cm2": heating.watt_density_max,
+        "watt_density_w_cm2": heating.watt_density,
+        "surface_cm2": heating.surface_cm2,
+        "pump_warming": heating.pump_warming,
+        "skin_film_c": heating.skin_film_c,
+        "skin_bulk_c": heating.skin_bulk_c,
+        "current_a": heating.current_a,
+    });
+    if let (Some(Fitted { status, whys: because }), Value::Object(map)) =
+        (&heating.fitted, &mut value)
+    {
+        map.insert("fitted".to_owned(), json!({ "status": status.id(), "why": whys(because) }));
+    }
+    value
+}
+
+/// One oil over temperatures in °C, as JSON.
+#[must_use]
+pub fn oil_points_json(oil: &Oil, temperatures: &[f64]) -> Value {
+    finish(json!({
+        "format": FORMAT,
+        "program": { "name": env!("CARGO_PKG_NAME"), "version": env!("CARGO_PKG_VERSION") },
+        "name": oil.name(),
+        "base": oil.base().id(),
+        "viscosity_index": oil.viscosity_index(),
+        "viscosity_index_reported": oil.viscosity_index().map(reported),
+        "pour_point_c": oil.pour_point().map(|pour| pour.as_celsius()),
+        "points": temperatures.iter().map(|t| {
+            let at = oil.estimate(*t);
+            let rho = oil.bulk().density(*t);
+            json!({
+                "temperature_c": t,
+                "low_mm2_s": at.low,
+                "expected_mm2_s": at.expected,
+                "high_mm2_s": at.high,
+                "dynamic_mpa_s": at.expected.map(|nu| nu * rho / 1000.0),
+                "reach": at.reach.id(),
+                "density_kg_m3": rho,
+                "specific_heat_j_kg_k": oil.bulk().specific_heat(*t),
+                "conductivity_w_m_k": oil.bulk().conductivity(*t),
+                "saybolt_s": at.expected.filter(|nu| *nu >= 1.8).map(|nu| {
+                    crate::oil::saybolt::seconds(nu, t * 1.8 + 32.0)
+                }),
+                "why": at.expected.is_none().then_some("below the pour point + 5 K the oil has no one viscosity"),
+            })
+        }).collect::<Vec<_>>(),
+    }))
+}
