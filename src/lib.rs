@@ -30,6 +30,17 @@
 //!
 //! The library opens no file, prints nothing and has no clock: the same case gives the same answer.
 
+#![cfg_attr(
+    not(test),
+    warn(
+        clippy::unwrap_used,
+        clippy::expect_used,
+        clippy::panic,
+        clippy::print_stdout,
+        clippy::print_stderr
+    )
+)]
+
 pub mod advice;
 pub mod air;
 pub mod case;

@@ -359,7 +359,7 @@ fn heaters_from_real_sizes() {
 }
 
 proptest! {
-    #![proptest_config(ProptestConfig::with_cases(64))]
+    #![proptest_config(ProptestConfig { failure_persistence: None, ..ProptestConfig::with_cases(64) })]
 
     #[test]
     fn power_only_grows_with_colder_windier_sooner_hotter(

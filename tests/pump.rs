@@ -283,6 +283,8 @@ fn first_turn_and_case_drain() {
 }
 
 proptest! {
+    #![proptest_config(ProptestConfig { failure_persistence: None, ..ProptestConfig::default() })]
+
     #[test]
     fn less_air_longer_hose_smaller_bore_never_help(
         nu in 5.0..5000.0_f64,

@@ -131,3 +131,21 @@ fn random_cases_agree() {
     let wrong = &spread.wrong;
     assert!(wrong.is_empty(), "{} differ:\n{}", wrong.len(), wrong.join("\n"));
 }
+
+#[test]
+fn examples_agree() {
+    let text = std::fs::read_to_string("tests/reference/examples.json").unwrap();
+    let stored: Value = serde_json::from_str(&text).unwrap();
+    for case in stored["cases"].as_array().unwrap() {
+        let name = case["name"].as_str().unwrap();
+        let now = std::fs::read_to_string(name).unwrap();
+        assert_eq!(
+            now,
+            case["toml"].as_str().unwrap(),
+            "{name} has changed: make the results anew"
+        );
+    }
+    let (oils, spread) = compare("tests/reference/examples.json");
+    assert!(oils >= 5, "{oils} oils");
+    assert!(spread.wrong.is_empty(), "{}", spread.wrong.join("\n"));
+}

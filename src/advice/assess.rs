@@ -199,6 +199,18 @@ pub fn assess(case: &Case, oil: &Oil) -> Assessment {
     found
 }
 
+impl Assessment {
+    /// Whether a floor of this oil hangs on an input, by its key. Keys of an oil count where they
+    /// make its viscosity.
+    #[must_use]
+    pub fn hangs_on(&self, key: &str) -> bool {
+        let of_oil = key.starts_with("oil[")
+            && [".base", ".viscosity", ".density"].iter().any(|end| key.ends_with(end));
+        let floors = [self.start_floor, self.light_floor, self.work_floor];
+        of_oil || floors.iter().filter_map(|floor| floor.set_by).any(|id| id.keys().contains(&key))
+    }
+}
+
 /// The warmest of the limits that `belongs` picks.
 fn floor(
     limits: &[LimitResult],

@@ -1,7 +1,7 @@
 //! The one table of limits: id, side, method, and the temperature from which each is met.
 
 use super::setup::Setup;
-use crate::pump::{INLET_BALANCE, PumpKind};
+use crate::pump::INLET_BALANCE;
 use crate::solve;
 use crate::source::{Method, Source};
 
@@ -33,6 +33,35 @@ impl LimitId {
             Self::InletPressureWork => "inlet-pressure-work",
             Self::ViscosityMin => "viscosity-min",
             Self::LineFlow => "line-flow",
+        }
+    }
+}
+
+impl LimitId {
+    /// The case keys a limit hangs on, its oil's aside.
+    #[must_use]
+    pub const fn keys(self) -> &'static [&'static str] {
+        match self {
+            Self::PourMargin | Self::LineFlow => &["duty.standing"],
+            Self::ViscosityStart => {
+                &["pump.viscosity_start_max", "suction", "pump.displacement", "site.elevation"]
+            }
+            Self::InletPressureStart => &[
+                "pump.inlet_pressure_start_min",
+                "pump.start_speed",
+                "suction.oil_above_pump",
+                "suction.strainer.at_density",
+                "site.elevation",
+            ],
+            Self::ViscosityWork => &["pump.viscosity_work_max"],
+            Self::InletPressureLight | Self::InletPressureWork => &[
+                "pump.inlet_pressure_work_min",
+                "pump.work_speed",
+                "suction.oil_above_pump",
+                "suction.strainer.at_density",
+                "site.elevation",
+            ],
+            Self::ViscosityMin => &["pump.viscosity_min"],
         }
     }
 }
@@ -260,25 +289,14 @@ fn line_flow(setup: &Setup<'_>, _: Edge) -> Outcome {
     setup.line_floor_c().map_or(Outcome::NotChecked(Why::PourPointUnknown), Outcome::At)
 }
 
-/// The start limit of the pump. Where the suction line is not known it is tightened to what a usual
-/// line passes at this elevation (this project's judgement), so that the answer stays on the safe
-/// side.
+/// The start limit of the pump, tightened where the inlet cannot be checked.
 fn viscosity_start(setup: &Setup<'_>, edge: Edge) -> Outcome {
-    let pump = &setup.case.pump;
-    let policy = &setup.case.policy.limits;
-    let mut limit = pump.viscosity_start_max.as_mm2_per_s();
-    if setup.inlet.is_none() {
-        let usual = match pump.kind {
-            PumpKind::ExternalGear | PumpKind::InternalGear | PumpKind::Gerotor => {
-                policy.unproven_viscosity_gear_mm2_s
-            }
-            _ => policy.unproven_viscosity_mm2_s,
-        };
-        let left = setup.atmosphere_kpa - pump.inlet_start_min.as_kpa();
-        if left <= 0.0 {
-            return Outcome::Unattainable(Why::NoPressureLeft);
-        }
-        limit = limit.min(usual * left / policy.unproven_drop_kpa);
+    let limit = setup
+        .case
+        .unproven_start_max
+        .unwrap_or_else(|| setup.case.pump.viscosity_start_max.as_mm2_per_s());
+    if limit <= 0.0 {
+        return Outcome::Unattainable(Why::NoPressureLeft);
     }
     thinner_than(setup, edge, limit)
 }
@@ -318,10 +336,9 @@ fn inlet_work(setup: &Setup<'_>, edge: Edge) -> Outcome {
     inlet(setup, edge, rpm, pump.inlet_work_min.as_kpa(), pump.inlet_work_assumed)
 }
 
-/// The lowest temperature from which the inlet pressure stays over its limit all the way up.
-///
-/// While the flow is laminar the pressure rises on warming. In the transition region the friction
-/// factor jumps up, so there the search walks down in steps of 1 K.
+/// The lowest temperature from which the inlet pressure stays over its limit all the way up: what is
+/// lost on the way to the pump falls on warming, but for the hump of the transition, which counts
+/// for every thicker oil.
 fn inlet(setup: &Setup<'_>, edge: Edge, rpm: f64, least_kpa: f64, assumed: bool) -> Outcome {
     let Some(line) = &setup.inlet else {
         return Outcome::NotChecked(if setup.case.suction.is_none() {
@@ -337,47 +354,31 @@ fn inlet(setup: &Setup<'_>, edge: Edge, rpm: f64, least_kpa: f64, assumed: bool)
             return Outcome::NotChecked(Why::TypicalLimitDoesNotFit);
         }
     }
+    let (from, to) = (setup.bottom_c, setup.case.policy.limits.search_to_c);
+    // Hot oil that flows turbulently passes the hump of the transition on its way up.
+    let turbulent = line.reynolds(q, setup.viscosity(edge, to)) > 2000.0;
+    let hump = if turbulent { line.hump_viscosity(q) } else { f64::INFINITY };
     // The logarithm of what may be lost over what is lost: nearly straight in temperature.
     let margin = |t: f64| {
-        let balance = line.balance(q, setup.viscosity(edge, t), setup.bulk.density(t));
+        let (nu, rho) = (setup.viscosity(edge, t), setup.bulk.density(t));
+        let balance = line.balance(q, nu, rho);
         let full = balance.tank + balance.head;
-        let (spare, lost) = (full - least_kpa, full - balance.pressure);
+        let pressure = if nu > hump {
+            balance.pressure.min(line.pressure_kpa(q, hump, rho))
+        } else {
+            balance.pressure
+        };
+        let (spare, lost) = (full - least_kpa, full - pressure);
         if spare > 0.0 { (spare / lost).ln() } else { -1.0 }
     };
-    let (from, to) = (setup.bottom_c, setup.case.policy.limits.search_to_c);
     if margin(to) < 0.0 {
         return Outcome::Unattainable(Why::InletTooLow);
-    }
-    let mut met = to;
-    // Where even the worst of the transition region leaves enough, start where the flow is laminar.
-    let worst =
-        line.lower_bound_kpa(q, LAMINAR_BELOW, setup.bulk.density(to), setup.bulk.density(from));
-    if worst.is_some_and(|worst| worst >= least_kpa) {
-        let laminar = |t: f64| (line.reynolds(q, setup.viscosity(edge, t)) / LAMINAR_BELOW).ln();
-        if laminar(from) >= 0.0 {
-            return Outcome::NeverBites { to: from };
-        }
-        met = solve::root(laminar, from, to, 1e-3).unwrap_or(to);
-    }
-    while met > from && line.reynolds(q, setup.viscosity(edge, met)) > LAMINAR_BELOW {
-        let next = (met - 1.0).max(from);
-        if margin(next) < 0.0 {
-            return crossing(margin, next, met);
-        }
-        met = next;
     }
     if margin(from) >= 0.0 {
         return Outcome::NeverBites { to: from };
     }
-    crossing(margin, from, met)
-}
-
-/// Under this Reynolds number friction falls steadily on warming.
-const LAMINAR_BELOW: f64 = 1500.0;
-
-fn crossing(margin: impl Fn(f64) -> f64, missed: f64, met: f64) -> Outcome {
     // A root is there by construction; not finding one would mean the balance is no number.
-    solve::root(margin, missed, met, CLOSE)
+    solve::root(margin, from, to, CLOSE)
         .map_or(Outcome::Unattainable(Why::InletTooLow), Outcome::At)
 }
 

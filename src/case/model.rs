@@ -28,6 +28,9 @@ pub struct Case {
     pub pump: Pump,
     /// The suction line, where it is given.
     pub suction: Option<SuctionLine>,
+    /// Thickest oil at a start where the inlet cannot be checked, mm²/s: what a usual suction line
+    /// passes at this elevation. Zero or less: none. `None` where the inlet is checked.
+    pub unproven_start_max: Option<f64>,
     /// The case drain line, where it is given.
     pub case_drain: Option<CaseDrain>,
     /// The tank.

@@ -100,7 +100,7 @@ pub(crate) struct AssessArgs {
 }
 
 #[derive(Debug, Args)]
-#[group(id = "which", required = true, multiple = false, args = ["class", "file", "viscosity"])]
+#[command(group = clap::ArgGroup::new("which").required(true).args(["class", "file", "viscosity"]))]
 pub(crate) struct OilArgs {
     /// A built-in class, such as HM-46
     #[arg(value_name = "CLASS")]

@@ -189,7 +189,7 @@ impl Reach {
             Self::BetweenPoints => "measured",
             Self::Extended => "extended",
             Self::NearPour => "near the pour point",
-            Self::BelowPour => "below it",
+            Self::BelowPour => "at or below the pour point",
         }
     }
 }

@@ -96,42 +96,49 @@ impl Inlet {
         self.balance(q, nu, rho).pressure
     }
 
-    /// A pressure, kPa, that the port never falls under while the Reynolds number is `re` or more and
-    /// the density lies between two values; `None` where the hose is too rough to say.
+    /// The viscosity, mm²/s, at which a flow in m³/s loses most on its way from turbulent to laminar.
     ///
-    /// Over Re 1500 the friction factor of a hose of relative roughness 0.01 and less stays under
-    /// 0.06 (Churchill 1977); fittings and strainer lose most at the least Reynolds number.
+    /// Between Reynolds numbers of about 3500 and 2000 the friction factor falls as oil thickens, so
+    /// a thicker oil may lose less. A limit that is to hold for every thinner oil too is held against
+    /// the pressure here as well.
     #[must_use]
-    pub fn lower_bound_kpa(&self, q: f64, re: f64, rho_least: f64, rho_most: f64) -> Option<f64> {
-        let line = &self.line;
-        if line.roughness > 0.01 || re < 1500.0 {
-            return None;
+    pub fn hump_viscosity(&self, q: f64) -> f64 {
+        let per_nu = q / self.line.area * self.line.bore * 1e6;
+        // Golden section in the logarithm of the Reynolds number; density plays no part.
+        let loss = |ln_re: f64| -self.pressure_kpa(q, per_nu / ln_re.exp(), 870.0);
+        let ratio = (5_f64.sqrt() - 1.0) / 2.0;
+        let (mut a, mut b) = (2000_f64.ln(), 10_000_f64.ln());
+        let (mut c, mut d) = (b - ratio * (b - a), a + ratio * (b - a));
+        let (mut fc, mut fd) = (loss(c), loss(d));
+        while b - a > 1e-3 {
+            if fc > fd {
+                (b, d, fd) = (d, c, fc);
+                c = b - ratio * (b - a);
+                fc = loss(c);
+            } else {
+                (a, c, fc) = (c, d, fd);
+                d = a + ratio * (b - a);
+                fd = loss(d);
+            }
         }
-        let v = q / line.area;
-        let nu = v * line.bore / re;
-        let loss = 0.06 * line.length / line.bore + line.k1 / re + line.kinf + line.velocity_factor;
-        let strainer = (line.strainer * nu * rho_most * q).min(line.strainer_most);
-        let rho_head = if line.head >= 0.0 { rho_least } else { rho_most };
-        let lost = 0.5 * rho_most * v * v * loss + strainer;
-        Some(self.tank_kpa + (rho_head * GRAVITY * line.head - lost) / 1000.0)
+        per_nu / f64::midpoint(a, b).exp()
     }
 
-    /// The largest viscosity, mm²/s, up to which every thinner oil in laminar flow keeps the port at
-    /// `least_kpa` or more; `None` where none does.
-    ///
-    /// The search goes up from the viscosity at Re 2000, or from 0.21 mm²/s where that is laminar.
+    /// The largest viscosity, mm²/s, that keeps the port at `least_kpa` or more, as every thinner oil
+    /// does; `None` where not even 0.21 mm²/s does.
     #[must_use]
     pub fn largest_viscosity(&self, q: f64, rho: f64, least_kpa: f64) -> Option<f64> {
         let margin = |ln_nu: f64| self.pressure_kpa(q, ln_nu.exp(), rho) - least_kpa;
-        let laminar_from = (self.reynolds(q, 1.0) / 2000.0).max(0.21).ln();
-        if margin(laminar_from) < 0.0 {
+        let (thin, thick) = (0.21_f64.ln(), 2e7_f64.ln());
+        if margin(thin) < 0.0 {
             return None;
         }
-        let to = 2e7_f64.ln();
+        let hump = self.hump_viscosity(q).ln().max(thin);
+        let (from, to) = if margin(hump) < 0.0 { (thin, hump) } else { (hump, thick) };
         if margin(to) >= 0.0 {
-            return Some(2e7);
+            return Some(to.exp());
         }
-        solve::root(margin, laminar_from, to, 1e-12).map(f64::exp)
+        solve::root(margin, from, to, 1e-12).map(f64::exp)
     }
 
     /// The highest speed, rpm, up to `cap`, such that it and every slower one keeps the port at

@@ -19,7 +19,7 @@ pub use kinds::{
     PressureDifference, Quantity, QuantityError, Rotation, Temperature, TemperatureDifference,
     ThermalConductivity, Thickness, TimeSpan, Velocity, Voltage, Volume, WattDensity,
 };
-pub use units::{Dimension, Unit};
+pub use units::{Dimension, Unit, dimensions};
 pub use viscosity::{DynamicViscosity, SayboltTime, ViscosityReading};
 
 pub(crate) use number::shown;

@@ -332,3 +332,32 @@ pub(crate) static WATT_DENSITY: Dimension = Dimension {
         unit(&["W/in²"], 1.0 / (2.54 * 2.54)),
     ],
 };
+
+/// All dimensions there are.
+#[must_use]
+pub fn dimensions() -> [&'static Dimension; 22] {
+    [
+        &TEMPERATURE,
+        &TEMPERATURE_DIFFERENCE,
+        &KINEMATIC_VISCOSITY,
+        &DYNAMIC_VISCOSITY,
+        &PRESSURE,
+        &LENGTH,
+        &AREA,
+        &VOLUME,
+        &DISPLACEMENT,
+        &MASS,
+        &DENSITY,
+        &POWER,
+        &VOLTAGE,
+        &CURRENT,
+        &TIME,
+        &ROTATION,
+        &FLOW,
+        &VELOCITY,
+        &THERMAL_CONDUCTIVITY,
+        &HEAT_TRANSFER_COEFFICIENT,
+        &HEAT_LOSS_RATE,
+        &WATT_DENSITY,
+    ]
+}

@@ -3,7 +3,8 @@
 use super::document::{Block, Document, Line};
 use super::units::{Shown, fixed};
 use crate::advice::{Assessment, Floor, HeatingStatus, LimitResult, Outcome};
-use crate::case::{Case, Units};
+use crate::case::{Assumption, Case, Units};
+use crate::heat::HeatPolicy;
 use crate::oil::Oil;
 
 /// Builds the document, in the case's units or others.
@@ -13,26 +14,28 @@ pub fn assessment(case: &Case, oils: &[(&Oil, Assessment)], units: Units) -> Doc
     let mut blocks =
         vec![Block::Title(Line::from(case.title.clone())), Block::Pairs(site(case, shown))];
     for (index, (oil, found)) in oils.iter().enumerate() {
-        one_oil(&mut blocks, oil, found, &format!("/oils/{index}"), shown);
+        one_oil(&mut blocks, case, (oil, found), &format!("/oils/{index}"), shown);
     }
     if !case.assumptions.is_empty() {
         blocks.push(Block::Heading(Line::from("Assumed - confirm")));
-        blocks.push(Block::List(
-            case.assumptions
-                .iter()
-                .enumerate()
-                .map(|(at, assumption)| {
-                    let find = if assumption.ask.is_empty() {
-                        String::new()
-                    } else {
-                        format!("; find it: {}", assumption.ask)
-                    };
-                    Line::from(format!("{}: ", assumption.key))
-                        .figure(assumption.value.clone(), format!("/assumptions/{at}/value"))
-                        .faint(format!(" ({}{find})", assumption.source))
-                })
-                .collect(),
-        ));
+        // Those that a floor hangs on first.
+        let governs = |key: &str| oils.iter().any(|(_, found)| found.hangs_on(key));
+        let mut rows: Vec<_> = case.assumptions.iter().enumerate().collect();
+        rows.sort_by_key(|(_, assumption)| !governs(&assumption.key));
+        let line = |(at, assumption): (usize, &Assumption)| {
+            let mut line = Line::from(format!("{}: ", assumption.key))
+                .figure(assumption.value.clone(), format!("/assumptions/{at}/value"));
+            if governs(&assumption.key) {
+                line = line.strong(", a floor hangs on it");
+            }
+            let find = if assumption.ask.is_empty() {
+                String::new()
+            } else {
+                format!("; find it: {}", assumption.ask)
+            };
+            line.faint(format!(" ({}{find})", assumption.source))
+        };
+        blocks.push(Block::List(rows.into_iter().map(line).collect()));
     }
     blocks.push(Block::Text(Line::from(
         "Judged is the hydraulic system only, on the thick edge of the likely viscosity. Rates of that \
@@ -68,7 +71,14 @@ fn site(case: &Case, shown: Shown) -> Vec<(String, Line)> {
     ]
 }
 
-fn one_oil(blocks: &mut Vec<Block>, oil: &Oil, found: &Assessment, at: &str, shown: Shown) {
+fn one_oil(
+    blocks: &mut Vec<Block>,
+    case: &Case,
+    (oil, found): (&Oil, &Assessment),
+    at: &str,
+    shown: Shown,
+) {
+    let policy = &case.policy.heat;
     let mut head = oil.name().to_owned();
     match oil.class() {
         Some(class) if class != oil.name() => head = format!("{head}, {class}"),
@@ -102,8 +112,8 @@ fn one_oil(blocks: &mut Vec<Block>, oil: &Oil, found: &Assessment, at: &str, sho
             |t| Line::new().figure(shown.temperature(t), format!("{at}/hot_ceiling_c")),
         ),
     ));
-    heating(&mut pairs, found, &format!("{at}/heating"), shown);
-    first_turn(&mut pairs, found, at, shown);
+    heating(&mut pairs, found, &format!("{at}/heating"), shown, policy);
+    first_turn(&mut pairs, found, at, shown, policy);
     blocks.push(Block::Pairs(pairs));
     blocks.push(Block::Table {
         head: ["limit", "met from", "met at the soak", "judged on expected"]
@@ -165,7 +175,13 @@ fn floor(floor: &Floor, pointer: &str, shown: Shown) -> Line {
     }
 }
 
-fn heating(pairs: &mut Vec<(String, Line)>, found: &Assessment, at: &str, shown: Shown) {
+fn heating(
+    pairs: &mut Vec<(String, Line)>,
+    found: &Assessment,
+    at: &str,
+    shown: Shown,
+    policy: &HeatPolicy,
+) {
     let heating = &found.heating;
     let mut put = |name: &str, line: Line| pairs.push((name.to_owned(), line));
     let figure = |text: String, key: &str| Line::new().figure(text, format!("{at}/{key}"));
@@ -199,7 +215,10 @@ fn heating(pairs: &mut Vec<(String, Line)>, found: &Assessment, at: &str, shown:
             figure(shown.power(needed), "needed_w")
                 .words(", ")
                 .figure(shown.power(high), format!("{at}/needed_high_w"))
-                .words(" if the tank loses 40 % more"),
+                .words(format!(
+                    " if the tank loses {} % more",
+                    fixed(100.0 * (policy.loss_uncertainty - 1.0), 0)
+                )),
         );
     }
     if let Some(heater) = heating.heater_w {
@@ -265,7 +284,13 @@ fn heating(pairs: &mut Vec<(String, Line)>, found: &Assessment, at: &str, shown:
     }
 }
 
-fn first_turn(pairs: &mut Vec<(String, Line)>, found: &Assessment, at: &str, shown: Shown) {
+fn first_turn(
+    pairs: &mut Vec<(String, Line)>,
+    found: &Assessment,
+    at: &str,
+    shown: Shown,
+    policy: &HeatPolicy,
+) {
     let turn = &found.first_turn;
     let figure =
         |text: String, key: &str| Line::new().figure(text, format!("{at}/first_turn/{key}"));
@@ -283,7 +308,7 @@ fn first_turn(pairs: &mut Vec<(String, Line)>, found: &Assessment, at: &str, sho
     }
     if let (Some(vacuum), Some(speed)) = (turn.vacuum_at_gate_kpa, turn.speed_max_rpm) {
         pairs.push((
-            "3 K over that floor".to_owned(),
+            format!("{} over that floor", shown.difference(policy.gate_margin_k).replace(".0", "")),
             Line::from("vacuum ")
                 .figure(shown.vacuum(vacuum), format!("{at}/first_turn/vacuum_at_gate_kpa"))
                 .words(" at start speed, no faster than ")

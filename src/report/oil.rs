@@ -4,7 +4,7 @@ use super::document::{Block, Document, Line};
 use super::units::{Shown, fixed};
 use super::wire::six;
 use crate::case::Units;
-use crate::oil::{Oil, reported, saybolt};
+use crate::oil::{Class, Oil, reported, saybolt};
 use std::fmt::Write;
 
 /// One oil over temperatures in °C, as a document.
@@ -50,6 +50,15 @@ pub fn oil_points(oil: &Oil, temperatures: &[f64], units: Units) -> Document {
             ]
         })
         .collect();
+    // What a class promises is not a measured oil, and says so.
+    if let Some(class) = oil.class().filter(|_| oil.class_only()).and_then(Class::named) {
+        about = about.words(format!(
+            ". Known by its class alone: {} [{}]. {}",
+            class.source(),
+            class.read().tag(),
+            class.note()
+        ));
+    }
     Document {
         blocks: vec![
             Block::Title(Line::from(oil.name())),

@@ -78,6 +78,7 @@ pub fn assessment_json(case: &Case, oils: &[(&Oil, Assessment)]) -> Value {
             "value": assumption.value,
             "source": assumption.source,
             "ask": assumption.ask,
+            "governs": oils.iter().any(|(_, found)| found.hangs_on(&assumption.key)),
         })).collect::<Vec<_>>(),
         "inputs": case.inputs.iter().map(|input| json!({
             "key": input.key,

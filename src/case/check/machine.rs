@@ -9,7 +9,7 @@ use super::desk::Desk;
 use super::{JUDGEMENT, TRADE};
 use crate::pump::{Fitting, Neutral, PumpKind, Strainer, SuctionLine};
 use crate::quantity::{
-    AbsolutePressure, Area, Power, Quantity, Temperature, Thickness, TimeSpan, Volume,
+    AbsolutePressure, Area, Power, Quantity, Temperature, Thickness, TimeSpan, Volume, shown,
 };
 
 impl Desk<'_> {
@@ -174,6 +174,40 @@ impl Desk<'_> {
             self.positive("suction.length", length);
         }
         Some(SuctionLine::new(bore?, length?, oil_above?, &fittings, strainer, &policy.inlet))
+    }
+
+    /// The start limit where the inlet cannot be checked: what a usual suction line passes at this
+    /// elevation (this project's judgement), so that the answer stays on the safe side.
+    pub(super) fn unproven_start_max(&mut self, site: &Site, pump: &Pump, policy: &Policy) -> f64 {
+        let policy = &policy.limits;
+        let usual = match pump.kind {
+            PumpKind::ExternalGear | PumpKind::InternalGear | PumpKind::Gerotor => {
+                policy.unproven_viscosity_gear_mm2_s
+            }
+            _ => policy.unproven_viscosity_mm2_s,
+        };
+        let air = crate::air::atmosphere_kpa(site.elevation.as_m());
+        let passes = usual * (air - pump.inlet_start_min.as_kpa()) / policy.unproven_drop_kpa;
+        let most = pump.viscosity_start_max.as_mm2_per_s();
+        let value = if passes < most {
+            format!(
+                "not checked; a start with at most {} mm²/s instead of the pump's {}",
+                shown(passes.max(0.0)),
+                pump.viscosity_start_max
+            )
+        } else {
+            "not checked; the pump's own start limit is the tighter".to_owned()
+        };
+        let key = if self.file.below("suction").next().is_none() {
+            "suction"
+        } else {
+            "pump.displacement"
+        };
+        self.assume(key, value, "what a usual suction line passes, this project's judgement");
+        if let Some(last) = self.assumptions.last_mut() {
+            last.ask = "outside diameter and length of the suction hose, and the displacement on the pump plate".to_owned();
+        }
+        passes.min(most)
     }
 
     pub(super) fn fittings(&mut self) -> Vec<(&'static Fitting, u32)> {

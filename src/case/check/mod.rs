@@ -46,6 +46,12 @@ impl Desk<'_> {
         let machine = self.machine();
         let pump = self.pump();
         let suction = self.suction(&policy);
+        let unproven_start_max = match (&site, &pump) {
+            (Some(site), Some(pump)) if suction.is_none() || pump.displacement.is_none() => {
+                Some(self.unproven_start_max(site, pump, &policy))
+            }
+            _ => None,
+        };
         let case_drain = self.case_drain();
         let reservoir = self.reservoir();
         let circuit = self.circuit(reservoir.as_ref());
@@ -68,6 +74,7 @@ impl Desk<'_> {
             machine,
             pump: pump?,
             suction,
+            unproven_start_max,
             case_drain,
             reservoir: reservoir?,
             circuit: circuit?,

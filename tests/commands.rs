@@ -1,0 +1,292 @@
+//! The program as it is run: output, errors, exit codes.
+#![cfg(feature = "cli")]
+
+use std::io::Write;
+use std::process::{Command, Output, Stdio};
+
+const LOADER: &str = "examples/skarn-loader.toml";
+
+fn run(args: &[&str]) -> Output {
+    with_input(args, "")
+}
+
+fn with_input(args: &[&str], input: &str) -> Output {
+    let mut child = Command::new(env!("CARGO_BIN_EXE_coldsump"))
+        .args(args)
+        .env_remove("CLICOLOR_FORCE")
+        .stdin(Stdio::piped())
+        .stdout(Stdio::piped())
+        .stderr(Stdio::piped())
+        .spawn()
+        .unwrap();
+    // The program may not read it at all.
+    let _ = child.stdin.take().unwrap().write_all(input.as_bytes());
+    child.wait_with_output().unwrap()
+}
+
+fn text(bytes: &[u8]) -> String {
+    String::from_utf8(bytes.to_vec()).unwrap()
+}
+
+fn json(output: &Output) -> serde_json::Value {
+    serde_json::from_slice(&output.stdout).unwrap()
+}
+
+#[test]
+fn examples_are_answered() {
+    for entry in std::fs::read_dir("examples").unwrap() {
+        let path = entry.unwrap().path();
+        if path.extension().is_some_and(|end| end == "toml") {
+            let output = run(&["assess", path.to_str().unwrap()]);
+            assert_eq!(output.status.code(), Some(0), "{path:?}: {}", text(&output.stderr));
+            assert!(output.stderr.is_empty(), "{path:?}");
+            let out = text(&output.stdout);
+            for line in out.lines() {
+                assert!(line.chars().count() <= 80, "{path:?}: {line}");
+            }
+            assert!(out.contains("do not turn the pump below"), "{path:?}");
+        }
+    }
+}
+
+#[test]
+fn json_keeps_its_contract() {
+    let found = json(&run(&["assess", LOADER, "--format", "json"]));
+    assert_eq!(found["format"], 1);
+    assert_eq!(found["program"]["name"], "coldsump");
+    assert_eq!(found["site"]["minimum_c"], -38.0);
+    let oil = &found["oils"][2];
+    for key in [
+        "name",
+        "class",
+        "in_service",
+        "verdict",
+        "reasons",
+        "viscosity_index",
+        "soak_c",
+        "tank_soak_c",
+        "viscosity_at_soak",
+        "start_floor_c",
+        "start_floor_set_by",
+        "start_floor_expected_c",
+        "light_floor_c",
+        "light_floor_set_by",
+        "work_floor_c",
+        "work_floor_set_by",
+        "work_floor_expected_c",
+        "hot_ceiling_c",
+        "viscosity_at_max_low_mm2_s",
+        "limits",
+        "heating",
+        "first_turn",
+        "circulation",
+    ] {
+        assert!(oil.get(key).is_some_and(|value| !value.is_null()), "{key}");
+    }
+    for key in [
+        "status",
+        "needed_w",
+        "needed_high_w",
+        "heater_w",
+        "elements_w",
+        "time_s",
+        "hold_w",
+        "energy_kwh",
+        "u_value_w_m2_k",
+        "steady_c",
+        "mean_target_c",
+        "thermostat_c",
+        "gate_valid_s",
+        "watt_density_max_w_cm2",
+        "watt_density_w_cm2",
+        "surface_cm2",
+        "pump_warming",
+        "skin_film_c",
+        "skin_bulk_c",
+        "current_a",
+    ] {
+        assert!(oil["heating"].get(key).is_some_and(|value| !value.is_null()), "{key}");
+    }
+    // Six significant figures, from one rounding.
+    let digits = |value: &serde_json::Value| {
+        value.to_string().trim_start_matches(['-', '0', '.']).replace('.', "").len()
+    };
+    assert!(digits(&oil["start_floor_c"]) <= 6, "{}", oil["start_floor_c"]);
+    no_null_without_why(&found, "");
+}
+
+/// An object with a null carries a `why` that names it.
+fn no_null_without_why(value: &serde_json::Value, at: &str) {
+    match value {
+        serde_json::Value::Object(map) => {
+            for (key, inner) in map {
+                if inner.is_null() {
+                    let why = map.get("why").and_then(|why| why.as_str()).unwrap_or_default();
+                    assert!(why.contains(key), "{at}/{key}: {why}");
+                }
+                no_null_without_why(inner, &format!("{at}/{key}"));
+            }
+        }
+        serde_json::Value::Array(list) => {
+            for (index, inner) in list.iter().enumerate() {
+                no_null_without_why(inner, &format!("{at}/{index}"));
+            }
+        }
+        _ => {}
+    }
+}
+
+#[test]
+fn figures_on_screen_are_in_the_json() {
+    use coldsump::{
+        advice,
+        case::{CaseFile, Units},
+        report,
+    };
+    for entry in std::fs::read_dir("examples").unwrap() {
+        let path = entry.unwrap().path();
+        let Some(name) = path.to_str().filter(|name| name.ends_with(".toml")) else { continue };
+        let case = CaseFile::read(name, &std::fs::read_to_string(name).unwrap()).check().unwrap();
+        let oils: Vec<_> = case.oils.iter().map(|oil| (oil, advice::assess(&case, oil))).collect();
+        let json = report::assessment_json(&case, &oils);
+        let document = report::assessment(&case, &oils, Units::Metric);
+        let mut count = 0;
+        for pointer in document.pointers() {
+            assert!(
+                json.pointer(pointer).is_some_and(|value| !value.is_null()),
+                "{name}: {pointer}"
+            );
+            count += 1;
+        }
+        assert!(count > 40, "{name}: {count} figures");
+    }
+}
+
+#[test]
+fn several_cases_and_standard_input() {
+    let output = run(&["assess", LOADER, "examples/hollow-skid.toml", "--format", "json"]);
+    let out = text(&output.stdout);
+    let lines: Vec<&str> = out.lines().collect();
+    assert_eq!(lines.len(), 2, "one line of JSON a case");
+    assert!(lines[0].contains("Loader 12") && lines[1].contains("Skid loader 3"));
+
+    let case = std::fs::read_to_string(LOADER).unwrap();
+    let output = with_input(&["assess", "-", "--format", "json"], &case);
+    assert_eq!(json(&output)["title"], "Loader 12, Skarn Ridge quarry");
+}
+
+#[test]
+fn a_bad_case_does_not_stop_the_good_ones() {
+    let output = run(&["assess", "examples/none.toml", LOADER]);
+    assert_eq!(output.status.code(), Some(1));
+    assert!(text(&output.stderr).starts_with("coldsump: cannot read examples/none.toml"));
+    assert!(text(&output.stdout).contains("Loader 12"));
+
+    let output = with_input(&["assess", "-", LOADER], "format = 1\n");
+    assert_eq!(output.status.code(), Some(2));
+    assert!(text(&output.stderr).contains("standard input: pump.kind: is missing"));
+    assert!(text(&output.stdout).contains("Loader 12"));
+}
+
+#[test]
+fn set_and_oil() {
+    let output = run(&[
+        "assess",
+        LOADER,
+        "--format",
+        "json",
+        "--oil",
+        "synthetic",
+        "--set",
+        "site.minimum_temperature=-20 °C",
+        "--set",
+        "site.heating_temperature=none",
+    ]);
+    let found = json(&output);
+    assert_eq!(found["oils"].as_array().unwrap().len(), 1);
+    assert_eq!(found["oils"][0]["verdict"], "starts-cold");
+    for (args, want) in [
+        (
+            vec!["assess", LOADER, "--set", "suction.boar=2 in"],
+            "--set: suction.boar: unknown key; did you mean `suction.bore`?",
+        ),
+        (vec!["assess", LOADER, "--set", "suction.bore"], "--set: `suction.bore` has no `=`"),
+        (
+            vec!["assess", LOADER, "--oil", "nobody"],
+            "examples/skarn-loader.toml: no oil of that name",
+        ),
+        (vec!["oil", "HM-47", "--at", "0 °C"], "no class `HM-47` is built in"),
+        (vec!["oil", "HM-46", "--at", "-40..100"], "--at: `100` has no unit"),
+        (vec!["oil", "HM-46", "--at", "100..-40 °C"], "--at: `100..-40 °C` runs downwards"),
+        (
+            vec!["oil", "--viscosity", "40 °C=46", "--at", "0 °C"],
+            "--viscosity.40 °C: `46` has no unit",
+        ),
+        (vec!["assess"], "error: the following required arguments"),
+        (vec!["asess", LOADER], "error: unrecognized subcommand"),
+    ] {
+        let output = run(&args);
+        assert_eq!(output.status.code(), Some(2), "{args:?}");
+        assert!(text(&output.stderr).contains(want), "{args:?}: {}", text(&output.stderr));
+        assert!(output.stdout.is_empty(), "{args:?}");
+    }
+}
+
+#[test]
+fn one_oil_over_temperature() {
+    let found = json(&run(&["oil", "HM-46", "--at", "-40..100 °C by 10", "--format", "json"]));
+    let points = found["points"].as_array().unwrap();
+    assert_eq!(points.len(), 15);
+    assert_eq!(points[0]["reach"], "below-pour");
+    assert!(points[0]["high_mm2_s"].is_null());
+    no_null_without_why(&found, "");
+    assert_eq!(points[8]["temperature_c"], 40.0);
+    assert_eq!(points[8]["expected_mm2_s"], 46.0);
+    assert_eq!(found["viscosity_index_reported"], 80.0);
+
+    let csv = text(&run(&["oil", "HM-46", "--at", "-40..100 °C by 10", "--format", "csv"]).stdout);
+    assert_eq!(csv.lines().count(), 16);
+    assert!(csv.starts_with("name,temperature_c,low_mm2_s,expected_mm2_s,high_mm2_s"));
+
+    let fahrenheit = json(&run(&[
+        "oil",
+        "--viscosity",
+        "100 °F=150 SUS",
+        "--viscosity",
+        "210 °F=44 SUS",
+        "--base",
+        "mineral",
+        "--pour-point",
+        "-20 °F",
+        "--density",
+        "54.6 lb/ft³",
+        "--at",
+        "-20..100 °F by 20",
+        "--format",
+        "json",
+    ]));
+    assert_eq!(fahrenheit["points"].as_array().unwrap().len(), 7);
+    let at_100 = &fahrenheit["points"][6];
+    assert!(at_100["saybolt_s"].as_f64().is_some_and(|sus| (sus - 150.0).abs() < 1e-3), "{at_100}");
+
+    let out = text(&run(&["oil", "HM 46", "--at", "-10..40 °C by 25", "--ascii"]).stdout);
+    assert!(out.is_ascii(), "{out}");
+}
+
+#[test]
+fn without_a_command_and_for_help() {
+    let output = run(&[]);
+    assert_eq!(output.status.code(), Some(2));
+    assert!(text(&output.stderr).contains("try: coldsump assess CASE.toml"));
+    let output = run(&["--help"]);
+    assert_eq!(output.status.code(), Some(0));
+    assert!(text(&output.stdout).contains("Exit codes"));
+}
+
+#[test]
+fn colour_only_where_asked() {
+    let plain = run(&["assess", LOADER]);
+    assert!(!plain.stdout.contains(&0x1b));
+    let colored = run(&["assess", LOADER, "--color", "always"]);
+    assert!(colored.stdout.contains(&0x1b));
+}
