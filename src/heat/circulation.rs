@@ -1,6 +1,6 @@
-//! Warming by circulation in neutral, and mixing of warm tank oil with cold rest.
+//! Warming by circulation in neutral.
 
-use super::warm_up::HeatCapacity;
+use super::warm_up::{HeatCapacity, mean_of_inverse};
 use crate::source::{Method, Source};
 
 /// Circulation.
@@ -9,10 +9,12 @@ pub static CIRCULATION: Method = Method {
     source: Source::quoted("hydraulic power Q p ends as heat where no work is taken out"),
 };
 
-/// Temperature, °C, when a tank and the rest of the circuit are mixed; heat capacities in J/K.
+/// Heat, W, of a flow in m³/s through a pressure in Pa, of which a share flows in neutral.
+///
+/// `P = share Q p`
 #[must_use]
-pub fn mixed_c(tank: f64, tank_c: f64, rest: f64, rest_c: f64) -> f64 {
-    (tank * tank_c + rest * rest_c) / (tank + rest)
+pub fn circulation_heat_w(share: f64, flow_m3_s: f64, pressure_pa: f64) -> f64 {
+    share * flow_m3_s * pressure_pa
 }
 
 /// Time, s, that heat in W takes to bring a circuit from one temperature to another, °C, against a
@@ -39,20 +41,14 @@ pub fn circulation_time_s(
     let mut time = 0.0;
     for at in 0..PIECES {
         let (a, b) = (from_c + step * at as f64, from_c + step * (at + 1) as f64);
-        let (left, right) = (net(a), net(b));
-        let x = right / left - 1.0;
-        let mean = if x.abs() < 1e-4 {
-            (1.0 - x / 2.0 + x * x / 3.0) / left
-        } else {
-            (1.0 + x).ln() / (x * left)
-        };
-        time += capacity.at(f64::midpoint(a, b)) * mean * step;
+        time += capacity.at(f64::midpoint(a, b)) * mean_of_inverse(net(a), net(b)) * step;
     }
     Some(time)
 }
 
-/// Temperature, °C, at which the loss of the circuit eats up the heat.
+/// Temperature, °C, at which the loss of the circuit eats up the heat; infinite for a circuit that
+/// loses nothing and is heated, the air for one that is not heated.
 #[must_use]
 pub fn circulation_steady_c(heat_w: f64, loss_w_k: f64, air_c: f64) -> f64 {
-    air_c + heat_w / loss_w_k
+    if heat_w <= 0.0 { air_c } else { air_c + heat_w / loss_w_k }
 }

@@ -31,7 +31,19 @@ pub static WATT_DENSITY: Method = Method {
     ),
 };
 
+/// Skin temperatures.
+pub static SKIN: Method = Method {
+    name: "lying rod in still oil; properties of the film: the estimate, of the bulk oil: the pessimistic bound",
+    source: Source::quoted(
+        "S. W. Churchill and H. H. S. Chu, Int. J. Heat Mass Transfer 18 (1975) 1049",
+    ),
+};
+
 /// A heating rod in oil.
+///
+/// Viscosity changes a thousandfold across the film of a rod in cold oil, and with it the answer:
+/// experiments favour properties near the film temperature, field experience the bulk oil's. Both
+/// are given.
 #[derive(Debug, Clone, Copy)]
 pub struct Rod<'a> {
     /// The oil round it.
@@ -58,20 +70,33 @@ impl Rod<'_> {
 
     /// Skin temperature, °C, at a watt density in W/cm² in oil of a temperature in °C: the estimate.
     /// `None` over 1500 °C, where nothing here holds.
+    ///
+    /// # Source
+    /// [`SKIN`].
     #[must_use]
     pub fn skin_film(&self, density: f64, oil_c: f64) -> Option<f64> {
-        solve::root(|skin| self.density_film(skin, oil_c) - density, oil_c, 1500.0, 1e-4)
+        skin(density, oil_c, |skin| self.density_film(skin, oil_c))
     }
 
     /// The same with properties of the bulk oil: the pessimistic bound.
+    ///
+    /// # Source
+    /// [`SKIN`].
     #[must_use]
     pub fn skin_bulk(&self, density: f64, oil_c: f64) -> Option<f64> {
-        solve::root(|skin| self.density_bulk(skin, oil_c) - density, oil_c, 1500.0, 1e-4)
+        let oil = self.oil.state(oil_c);
+        skin(density, oil_c, |skin| {
+            let difference = skin - oil_c;
+            oil.rod(difference, self.diameter) * difference / 1e4
+        })
     }
 
     /// The greatest watt density, W/cm², under a cap: film skin at `hottest_c` oil at most the skin
     /// limit; where the flash point is known, that skin and the bulk bound in `coldest_c` oil at most
-    /// flash point less its margin.
+    /// flash point less its margin. Zero where a limit is at or under the oil it is judged in.
+    ///
+    /// # Source
+    /// [`WATT_DENSITY`].
     #[must_use]
     pub fn greatest_density(
         &self,
@@ -92,8 +117,25 @@ impl Rod<'_> {
     }
 }
 
+/// The skin that gives a watt density: heat rises with the skin like a power of its difference to the
+/// oil, so the search runs on logarithms, where that is nearly a straight line.
+fn skin(density: f64, oil_c: f64, at: impl Fn(f64) -> f64) -> Option<f64> {
+    const TOP_C: f64 = 1500.0;
+    if density <= 0.0 {
+        return Some(oil_c);
+    }
+    let over = |y: f64| (at(oil_c + y.exp()) / density).ln();
+    let y = solve::root(over, 1e-3_f64.ln(), (TOP_C - oil_c).ln(), 1e-7);
+    // Under a thousandth of a kelvin there is nothing to find.
+    y.map_or_else(|| (at(oil_c + 1e-3) >= density).then_some(oil_c), |y| Some(oil_c + y.exp()))
+}
+
 /// Cap on the watt density, W/cm², by the thick edge of the viscosity at the soak, mm²/s (`None`:
-/// no number).
+/// no number). No element at all belongs in oil at or below its pour point: see
+/// [`immersion_allowed`].
+///
+/// # Source
+/// [`WATT_DENSITY`].
 #[must_use]
 pub fn density_cap(viscosity: Option<f64>, place: ElementPlace, policy: &HeatPolicy) -> f64 {
     match viscosity {
@@ -101,5 +143,38 @@ pub fn density_cap(viscosity: Option<f64>, place: ElementPlace, policy: &HeatPol
         Some(nu) if nu < policy.medium_from_mm2_s => policy.density_thin,
         Some(nu) if nu <= policy.thick_from_mm2_s => policy.density_medium,
         _ => policy.density_thick,
+    }
+}
+
+/// Whether an element may be in the oil at all: not at or below the pour point, where the oil does
+/// not convect and a rod of 0.8 W/cm² heats its own skin by some 160 K in five minutes. Temperatures
+/// in °C; a pour point that is not known forbids nothing.
+#[must_use]
+pub fn immersion_allowed(soak_c: f64, pour_c: Option<f64>) -> bool {
+    pour_c.is_none_or(|pour| soak_c > pour)
+}
+
+/// Greatest electrical power, W, of pads on a flat surface in m².
+#[must_use]
+pub fn pad_most_w(flat_m2: f64, policy: &HeatPolicy) -> f64 {
+    policy.pad_density * flat_m2 * 1e4
+}
+
+/// Power into the oil, W, of an electrical power in W.
+#[must_use]
+pub fn into_oil_w(kind: ElementKind, electrical_w: f64, policy: &HeatPolicy) -> f64 {
+    electrical_w * oil_share(kind, policy)
+}
+
+/// Electrical power, W, that brings a power in W into the oil.
+#[must_use]
+pub fn electrical_w(kind: ElementKind, into_oil_w: f64, policy: &HeatPolicy) -> f64 {
+    into_oil_w / oil_share(kind, policy)
+}
+
+fn oil_share(kind: ElementKind, policy: &HeatPolicy) -> f64 {
+    match kind {
+        ElementKind::Immersion => 1.0,
+        ElementKind::Pad => policy.pad_share,
     }
 }

@@ -25,7 +25,10 @@ pub struct Circuit {
 }
 
 impl Circuit {
-    /// Power it carries for hours, W, less the other load.
+    /// Power it carries for hours, W, less the other load; 0 where that takes it all.
+    ///
+    /// # Source
+    /// [`CIRCUIT`].
     #[must_use]
     pub fn continuous_w(&self, policy: &HeatPolicy) -> f64 {
         let limited = [
@@ -49,14 +52,14 @@ impl Circuit {
         } else {
             self.amperes
         };
-        self.volts * amperes * self.phase_factor() - self.other_w
+        (self.volts * amperes * self.phase_factor() - self.other_w).max(0.0)
     }
 
     fn phase_factor(&self) -> f64 {
         if self.three_phase { 3_f64.sqrt() } else { 1.0 }
     }
 
-    /// Current, A, that a power in W draws.
+    /// Current, A, that a power in W draws: `P/V`, three-phase `P/(√3 V)`.
     #[must_use]
     pub fn current_a(&self, power_w: f64) -> f64 {
         power_w / (self.volts * self.phase_factor())
@@ -99,66 +102,74 @@ pub enum Chosen {
     NoSize,
 }
 
-/// Chooses: the smallest single size that covers the likely worst and is carried; else a single one
-/// that covers the loss as computed; else two, then three elements.
+/// Delivered over rated power of an element: `(V/V_rated)²`.
 #[must_use]
-pub fn choose(sizes: &[f64], wanted: Wanted) -> Chosen {
-    let pick = |counts: std::ops::RangeInclusive<usize>, least: f64, most: f64| {
-        let mut best: Option<([f64; 3], usize, f64)> = None;
-        combinations(sizes, counts, |elements, count| {
-            let total = elements.iter().sum::<f64>() * wanted.delivered;
-            let better = best.is_none_or(|(_, fewest, smallest)| {
-                total < smallest || (total == smallest && count < fewest)
-            });
-            if total >= least && total <= most && better {
-                best = Some((elements, count, total));
-            }
-        });
-        best.map(|(elements, count, _)| elements.iter().copied().take(count).collect::<Vec<f64>>())
-    };
-    let most = wanted.carried_w.min(wanted.surface_w);
-    let (needed, high) = (wanted.needed_w, wanted.needed_high_w);
-    let ladder = [
-        (1, high, false),
-        (1, needed, true),
-        (2, high, false),
-        (2, needed, true),
-        (3, high, false),
-        (3, needed, true),
-    ];
-    for (count, least, tight) in ladder {
-        if let Some(elements) = pick(count..=count, least, most) {
-            return Chosen::Fits { elements, tight };
-        }
-    }
-    if pick(1..=3, needed, f64::INFINITY).is_none() {
-        return Chosen::NoSize;
-    }
-    if pick(1..=3, needed, wanted.surface_w).is_none() {
-        return Chosen::SurfaceTooSmall;
-    }
-    let without_circuit =
-        ladder.iter().find_map(|(count, least, _)| pick(*count..=*count, *least, wanted.surface_w));
-    Chosen::CircuitTooSmall { elements: without_circuit.unwrap_or_default() }
+pub fn delivered_share(volts: f64, rated_volts: f64) -> f64 {
+    (volts / rated_volts).powi(2)
 }
 
-/// Every one, two or three of the sizes, as the counts ask; unused places are 0.
-fn combinations(
+/// Chooses: the smallest single size that covers the likely worst and is carried; else a single one
+/// that covers the loss as computed; else two, then three elements, of the least total.
+#[must_use]
+pub fn choose(sizes: &[f64], wanted: Wanted) -> Chosen {
+    let most = wanted.carried_w.min(wanted.surface_w);
+    let ladder = |most: f64| {
+        (1..=MOST_ELEMENTS).find_map(|count| {
+            let high = smallest(sizes, count, wanted.needed_high_w, most, wanted.delivered);
+            let tight = high.is_none();
+            high.or_else(|| smallest(sizes, count, wanted.needed_w, most, wanted.delivered))
+                .map(|elements| (elements, tight))
+        })
+    };
+    if let Some((elements, tight)) = ladder(most) {
+        return Chosen::Fits { elements, tight };
+    }
+    if let Some((elements, _)) = ladder(wanted.surface_w) {
+        return Chosen::CircuitTooSmall { elements };
+    }
+    if ladder(f64::INFINITY).is_some() { Chosen::SurfaceTooSmall } else { Chosen::NoSize }
+}
+
+/// No heater has more elements than this.
+const MOST_ELEMENTS: usize = 3;
+
+/// The `count` sizes of the least total that delivers at least `least` and at most `most`, W. A size
+/// may be taken more than once.
+fn smallest(
     sizes: &[f64],
-    counts: std::ops::RangeInclusive<usize>,
-    mut each: impl FnMut([f64; 3], usize),
+    count: usize,
+    least: f64,
+    most: f64,
+    delivered: f64,
+) -> Option<Vec<f64>> {
+    let mut best: Option<(f64, [f64; MOST_ELEMENTS])> = None;
+    each_of(sizes, count, [0.0; MOST_ELEMENTS], 0, &mut |elements| {
+        let total = elements.iter().sum::<f64>();
+        let fits = total * delivered >= least && total * delivered <= most;
+        if fits && best.is_none_or(|(found, _)| total < found) {
+            best = Some((total, *elements));
+        }
+    });
+    best.map(|(_, elements)| elements.into_iter().take(count).collect())
+}
+
+/// Calls `found` with every choice of `count` of the sizes, in their order.
+fn each_of(
+    sizes: &[f64],
+    count: usize,
+    chosen: [f64; MOST_ELEMENTS],
+    at: usize,
+    found: &mut impl FnMut(&[f64; MOST_ELEMENTS]),
 ) {
-    for (i, a) in sizes.iter().enumerate() {
-        if counts.contains(&1) {
-            each([*a, 0.0, 0.0], 1);
+    if at == count {
+        found(&chosen);
+        return;
+    }
+    for (i, size) in sizes.iter().enumerate() {
+        let mut chosen = chosen;
+        if let Some(place) = chosen.get_mut(at) {
+            *place = *size;
         }
-        for (j, b) in sizes.iter().enumerate().skip(i).take_while(|_| *counts.end() >= 2) {
-            if counts.contains(&2) {
-                each([*a, *b, 0.0], 2);
-            }
-            for c in sizes.iter().skip(j).take_while(|_| *counts.end() >= 3) {
-                each([*a, *b, *c], 3);
-            }
-        }
+        each_of(sizes.get(i..).unwrap_or_default(), count, chosen, at + 1, found);
     }
 }

@@ -1,11 +1,10 @@
 //! Warm-up, hold and cool-down of a tank: `C dT/dt = P - loss(T)`.
 //!
-//! The films are evaluated once an oil, at fixed nodes; every question of power and time is then
-//! answered from that curve.
+//! Every question of power and time is answered from the loss curve, without another film.
 
+use super::loss_curve::LossCurve;
 use super::tank_loss::TankLoss;
 use crate::oil::Bulk;
-use crate::solve;
 use crate::source::{Method, Source};
 
 /// Warm-up.
@@ -25,7 +24,7 @@ pub struct HeatCapacity {
 
 impl HeatCapacity {
     /// Oil volume in L (at 15 °C) with its bulk properties, steel in kg with its specific heat in
-    /// J/(kg·K).
+    /// J/(kg·K): `C = V ρ15 cp(T) + m c`.
     #[must_use]
     pub fn new(litres: f64, bulk: &Bulk, steel_kg: f64, steel_heat: f64) -> Self {
         let oil_kg = litres / 1000.0 * bulk.density_15();
@@ -47,80 +46,23 @@ impl HeatCapacity {
     }
 }
 
-/// Nodes of the loss curve.
-const NODES: usize = 14;
-/// Pieces of a warm-up.
-const PIECES: usize = 32;
-
-/// The loss of a tank over temperature, evaluated once.
-#[derive(Debug, Clone)]
-pub struct LossCurve {
-    air_c: f64,
-    span_k: f64,
-    /// Loss per kelvin, W/K, at `air + span·(i/(NODES-1))³`.
-    ua: [f64; NODES],
-}
-
-impl LossCurve {
-    /// Evaluates a tank's loss from its air to `top_c`.
-    #[must_use]
-    pub fn new(loss: &TankLoss<'_>, top_c: f64) -> Self {
-        let air_c = loss.air_c();
-        let span_k = (top_c - air_c).max(1.0);
-        let mut ua = [0.0; NODES];
-        // The film of a vanishing difference is that of a very small one. Hottest first: there the
-        // films change least from node to node.
-        let node = |at: usize| {
-            let s = at as f64 / (NODES - 1) as f64;
-            air_c + (span_k * s * s * s).max(1e-4)
-        };
-        loss.ua_along((0..NODES).rev().map(node), &mut ua);
-        ua.reverse();
-        Self { air_c, span_k, ua }
-    }
-
-    /// Air temperature, °C.
-    #[must_use]
-    pub const fn air_c(&self) -> f64 {
-        self.air_c
-    }
-
-    /// Loss per kelvin over the air at an oil temperature in °C, W/K.
-    #[must_use]
-    pub fn ua(&self, celsius: f64) -> f64 {
-        let x = ((celsius - self.air_c) / self.span_k).clamp(0.0, 1.0).cbrt() * (NODES - 1) as f64;
-        // x lies between 0 and NODES - 1.
-        #[allow(
-            clippy::cast_possible_truncation,
-            clippy::cast_sign_loss,
-            reason = "0 to NODES - 1"
-        )]
-        let first = (x as usize).clamp(1, NODES - 3) - 1;
-        let [a, b, c, d] =
-            [self.ua[first], self.ua[first + 1], self.ua[first + 2], self.ua[first + 3]];
-        let t = x - first as f64;
-        // Cubic through four neighbouring nodes.
-        let (t1, t2, t3) = (t - 1.0, t - 2.0, t - 3.0);
-        -a * t1 * t2 * t3 / 6.0 + b * t * t2 * t3 / 2.0 - c * t * t1 * t3 / 2.0
-            + d * t * t1 * t2 / 6.0
-    }
-
-    /// Loss at an oil temperature in °C, W.
-    #[must_use]
-    pub fn loss_w(&self, celsius: f64) -> f64 {
-        if celsius <= self.air_c { 0.0 } else { self.ua(celsius) * (celsius - self.air_c) }
-    }
-}
+/// Pieces of a warm-up; an even number.
+const PIECES: usize = 40;
 
 /// A warm-up from one temperature to another: the loss on the way, ready for any power.
 #[derive(Debug, Clone)]
 pub struct WarmUp {
-    /// (K from the start, heat capacity J/K, loss W) at the joints.
+    /// (temperature °C, heat capacity J/K, loss W) at the joints.
     joints: [(f64, f64, f64); PIECES + 1],
+    /// Heat to warm the body, without loss, J.
+    heat: f64,
+    /// Greatest loss on the way, W.
+    worst: f64,
 }
 
 impl WarmUp {
-    /// From `from_c` to `to_c`, with the loss times `loss_factor`.
+    /// From `from_c` to `to_c`, with the loss times `loss_factor`. Nothing to do where `to_c` is no
+    /// warmer.
     #[must_use]
     pub fn new(
         curve: &LossCurve,
@@ -129,67 +71,110 @@ impl WarmUp {
         to_c: f64,
         loss_factor: f64,
     ) -> Self {
+        // Joints lie closer at both ends: where the loss bends most, and where little power is left.
+        let rise = (to_c - from_c).max(0.0);
         let mut joints = [(0.0, 0.0, 0.0); PIECES + 1];
         for (at, joint) in joints.iter_mut().enumerate() {
-            let t = from_c + (to_c - from_c) * at as f64 / PIECES as f64;
-            *joint = (t - from_c, capacity.at(t), loss_factor * curve.loss_w(t));
+            let s = at as f64 / PIECES as f64;
+            let t = from_c + rise * s * s * (3.0 - 2.0 * s);
+            *joint = (t, capacity.at(t), loss_factor * curve.loss_w(t));
         }
-        Self { joints }
-    }
-
-    fn worst_loss(&self) -> f64 {
-        self.joints.iter().map(|joint| joint.2).fold(0.0, f64::max)
+        let heat = rise * capacity.at(f64::midpoint(from_c, to_c));
+        let worst = joints.iter().map(|joint| joint.2).fold(0.0, f64::max);
+        Self { joints, heat, worst }
     }
 
     /// Time in s that a power in W into the oil takes; `None` where the loss eats it up on the way.
     ///
-    /// `t = ∫ C dT/(P - loss)`, the loss linear between the joints and integrated in closed form.
+    /// `t = ∫ C dT/(P - loss)`: the loss linear between the joints and integrated in closed form, so
+    /// that a power barely over the loss is no trouble, then the error of the straight pieces taken
+    /// out by comparing with pieces of twice the length (Richardson).
+    ///
+    /// # Source
+    /// [`WARM_UP`]. L. F. Richardson, Phil. Trans. R. Soc. A 226 (1927) 299 (memory).
     #[must_use]
     pub fn time_s(&self, power_w: f64) -> Option<f64> {
-        if power_w <= self.worst_loss() {
-            return None;
+        if self.heat <= 0.0 {
+            return Some(0.0);
         }
-        let mut time = 0.0;
-        for (a, b) in self.joints.iter().zip(self.joints.iter().skip(1)) {
-            let step = b.0 - a.0;
+        // Also false for a power that is not a number.
+        if power_w > self.worst { Some(self.time_over_loss(power_w).0) } else { None }
+    }
+
+    /// Time in s and how fast it falls with power, s/W, for a power over the loss.
+    fn time_over_loss(&self, power_w: f64) -> (f64, f64) {
+        let (mut fine, mut coarse, mut fall) = (0.0, 0.0, 0.0);
+        let mut add = |a: &(f64, f64, f64), b: &(f64, f64, f64), sum: &mut f64| {
             let (left, right) = (power_w - a.2, power_w - b.2);
-            let capacity = f64::midpoint(a.1, b.1);
-            // Mean of 1/(P - loss) over the piece.
-            let x = right / left - 1.0;
-            let mean = if x.abs() < 1e-4 {
-                (1.0 - x / 2.0 + x * x / 3.0) / left
-            } else {
-                (1.0 + x).ln() / (x * left)
-            };
-            time += capacity * mean * step;
+            let heat = f64::midpoint(a.1, b.1) * (b.0 - a.0);
+            *sum += heat * mean_of_inverse(left, right);
+            // Mean of 1/N² over a piece on which N is linear.
+            fall += heat / (left * right) / 2.0;
+        };
+        for pair in self.joints.windows(3).step_by(2) {
+            if let [a, b, c] = pair {
+                add(a, b, &mut fine);
+                add(b, c, &mut fine);
+                add(a, c, &mut coarse);
+            }
         }
-        Some(time)
+        (fine + (fine - coarse) / 3.0, fall)
     }
 
     /// The smallest power in W into the oil that is through within `time_s`.
+    ///
+    /// Never less than the loss at the target; that loss itself where the time is endless.
     #[must_use]
     pub fn needed_power_w(&self, time_s: f64) -> f64 {
-        let worst = self.worst_loss();
-        let heat: f64 = self
-            .joints
-            .iter()
-            .zip(self.joints.iter().skip(1))
-            .map(|(a, b)| f64::midpoint(a.1, b.1) * (b.0 - a.0))
-            .sum();
-        let bare = heat / time_s;
-        if worst <= 0.0 {
+        if self.heat <= 0.0 {
+            return 0.0;
+        }
+        let bare = self.heat / time_s;
+        if self.worst <= 0.0 {
             return bare;
         }
-        // In 1/t the question is nearly linear in the power. Where the loss is at its worst all the
-        // way the power is largest; without any loss it is smallest.
-        let pace = |power: f64| self.time_s(power).map_or(0.0, f64::recip) - time_s.recip();
-        let (least, most) = (bare.max(worst), bare + worst);
-        solve::root(pace, least, most * (1.0 + 1e-12), 1e-7 * most).unwrap_or(most)
+        // The pace 1/t is nearly linear in the power: Newton's method, kept between the power without
+        // any loss or at a standstill, and that against the worst loss all the way.
+        let pace = time_s.recip();
+        let (mut low, mut high) = (bare.max(self.worst), bare + self.worst);
+        let mut power = bare + 0.6 * self.worst;
+        for _ in 0..100 {
+            if !(power > low && power < high) {
+                power = f64::midpoint(low, high);
+            }
+            if power <= low || power >= high {
+                break;
+            }
+            let (time, fall) = self.time_over_loss(power);
+            let over = time.recip() - pace;
+            if over > 0.0 {
+                high = power;
+            } else {
+                low = power;
+            }
+            let step = over * time * time / fall;
+            power -= step;
+            if step.abs() < 1e-9 * power {
+                break;
+            }
+        }
+        power.clamp(low, high)
     }
 }
 
+/// Mean of 1/N over a piece on which N runs straight from `left` to `right`, both positive.
+pub(super) fn mean_of_inverse(left: f64, right: f64) -> f64 {
+    let x = (right - left) / left;
+    if x.abs() < 1e-3 {
+        // The logarithm's series; its next term is under 2e-16.
+        let series = 1.0 - x * (1.0 / 2.0 - x * (1.0 / 3.0 - x * (1.0 / 4.0 - x / 5.0)));
+        return series / left;
+    }
+    (right / left).ln() / (right - left)
+}
+
 /// Time in s for a tank without heat to cool from one temperature to another, °C; `None` where the
-/// air is not cold enough for it.
+/// air is not cold enough for it, or nothing is lost.
 #[must_use]
 pub fn cooling_time_s(
     curve: &LossCurve,
@@ -198,32 +183,95 @@ pub fn cooling_time_s(
     to_c: f64,
     loss_factor: f64,
 ) -> Option<f64> {
-    if to_c <= curve.air_c() || from_c < to_c {
+    if to_c <= curve.air_c() || from_c < to_c || loss_factor * curve.loss_w(to_c) <= 0.0 {
         return None;
     }
-    // ∫ C dT/(UA (T - Ta)) in ln(T - Ta), where the integrand stays smooth down to the air: Simpson.
-    const HALVES: usize = 16;
-    let air_c = curve.air_c();
-    let (from, to) = ((from_c - air_c).ln(), (to_c - air_c).ln());
-    let f = |u: f64| {
-        let t = air_c + u.exp();
-        capacity.at(t) / (loss_factor * curve.ua(t))
-    };
-    let step = (from - to) / HALVES as f64;
-    let mut sum = f(to) + f(from);
-    for at in 1..HALVES {
-        sum += f(to + step * at as f64) * if at % 2 == 1 { 4.0 } else { 2.0 };
+    // In y = ln(T - Ta) the integrand C/UA is smooth however close the air: Gauss-Legendre's eight
+    // points on each of a few pieces.
+    let (from, to) = ((from_c - curve.air_c()).ln(), (to_c - curve.air_c()).ln());
+    const COOLING_PIECES: usize = 3;
+    let half = (from - to) / (2 * COOLING_PIECES) as f64;
+    let mut time = 0.0;
+    for piece in 0..COOLING_PIECES {
+        let middle = to + half * (2 * piece + 1) as f64;
+        for (point, weight) in GAUSS {
+            for y in [middle - half * point, middle + half * point] {
+                let t = curve.air_c() + y.exp();
+                time += weight * half * capacity.at(t) / (loss_factor * curve.ua(t));
+            }
+        }
     }
-    Some(sum * step / 3.0)
+    Some(time)
 }
 
-/// The temperature, °C, at which a tank's loss eats up a power in W; `None` above 300 °C, where
-/// nothing here holds.
+/// Points and weights of the Gauss-Legendre rule of eight. M. Abramowitz and I. A. Stegun, Handbook
+/// of Mathematical Functions (1964), table 25.4 (memory; a test integrates powers with it).
+const GAUSS: [(f64, f64); 4] = [
+    (0.183_434_642_495_649_8, 0.362_683_783_378_362),
+    (0.525_532_409_916_329, 0.313_706_645_877_887_3),
+    (0.796_666_477_413_626_7, 0.222_381_034_453_374_5),
+    (0.960_289_856_497_536_3, 0.101_228_536_290_376_3),
+];
+
+/// The temperature, °C, at which a tank's loss eats up a power in W, also over the top of its curve;
+/// `None` above 300 °C, where nothing here holds.
 #[must_use]
 pub fn steady_c(curve: &LossCurve, loss: &TankLoss<'_>, power_w: f64) -> Option<f64> {
-    let top = curve.air_c + curve.span_k;
-    if curve.loss_w(top) >= power_w {
-        return solve::root(|t| curve.loss_w(t) - power_w, curve.air_c, top, 1e-6);
+    const TOP_C: f64 = 300.0;
+    if let Some(within) = curve.steady_c(power_w, 1.0) {
+        return Some(within);
     }
-    solve::root(|t| loss.loss_w(t) - power_w, top, 300.0, 1e-3)
+    // Loss goes nearly with a power of the difference to the air: on logarithms nearly a straight
+    // line, so that the secant method needs a few steps. The root stays between brackets.
+    let over = |y: f64| (loss.loss_w(loss.air_c() + y.exp()) / power_w).ln();
+    let (mut low, mut high) = ((curve.top_c() - curve.air_c()).ln(), (TOP_C - loss.air_c()).ln());
+    // Written so that a loss of zero, or none that is a number, is no end either.
+    let reaches = over(high) >= 0.0;
+    if !reaches {
+        return None;
+    }
+    let (mut y, mut slope) = (low, 1.2);
+    let mut miss = over(y);
+    for _ in 0..100 {
+        if miss > 0.0 {
+            high = y;
+        } else {
+            low = y;
+        }
+        let step = -miss / slope;
+        let next =
+            if y + step > low && y + step < high { y + step } else { f64::midpoint(low, high) };
+        let moved = next - y;
+        if moved.abs() < 1e-9 {
+            break;
+        }
+        let now = over(next);
+        slope = (now - miss) / moved;
+        (y, miss) = (next, now);
+    }
+    Some(loss.air_c() + y.exp())
+}
+
+#[cfg(test)]
+mod tests {
+    use super::{GAUSS, mean_of_inverse};
+
+    #[test]
+    fn eight_points_integrate_powers_exactly() {
+        for power in (0..16).step_by(2) {
+            let sum: f64 = GAUSS.iter().map(|(x, w)| 2.0 * w * x.powi(power)).sum();
+            let exact = 2.0 / f64::from(power + 1);
+            assert!((sum - exact).abs() < 1e-13, "x^{power}: {sum} against {exact}");
+        }
+    }
+
+    #[test]
+    fn mean_of_inverse_joins_its_series() {
+        for x in [1e-9, 1e-6, 0.000_999, 0.001_001, 0.5, 1e6] {
+            let exact = f64::ln_1p(x) / (2.0 * x);
+            let found = mean_of_inverse(2.0, 2.0 + 2.0 * x);
+            assert!((found / exact - 1.0).abs() < 3e-13, "{x}: {found} against {exact}");
+        }
+        assert_eq!(mean_of_inverse(4.0, 4.0), 0.25);
+    }
 }
