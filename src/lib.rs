@@ -52,3 +52,4 @@ pub mod quantity;
 pub mod report;
 mod solve;
 pub mod source;
+mod words;

@@ -151,8 +151,8 @@ pub(super) fn circulation(
         Neutral::LoadSensing => policy.load_sensing_share,
         Neutral::OpenCentre | Neutral::ClosedLoop => 1.0,
     };
-    let heat_w =
-        share * setup.flow_per_rpm * case.pump.start_speed.as_rpm() * pressure.as_kpa() * 1000.0;
+    let flow = setup.flow_per_rpm * case.pump.start_speed.as_rpm();
+    let heat_w = heat::circulation_heat_w(share, flow, pressure.as_kpa() * 1000.0);
     let loss = match (case.circuit.heat_loss, start_floor) {
         (Some(given), _) => given.as_w_per_k(),
         (None, Some(floor)) => {

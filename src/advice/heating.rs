@@ -5,6 +5,7 @@ use crate::heat::{
     self, Chosen, ElementKind, ElementPlace, HeatCapacity, LossCurve, OilFilm, Rod, TankLoss,
     Walls, Wanted, WarmUp,
 };
+use crate::quantity::Temperature;
 
 /// What heating comes to.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -196,6 +197,10 @@ impl Heating {
     }
 }
 
+/// The loss is evaluated up to here at least, °C, so that a target past what is allowed still has its
+/// figures.
+const CURVE_TOP_C: f64 = 90.0;
+
 /// The tank of a case with one oil: heat capacity and loss, evaluated once.
 pub(super) struct Tank<'a> {
     pub(super) capacity: HeatCapacity,
@@ -240,8 +245,8 @@ impl<'a> Tank<'a> {
             TankLoss::from_films(walls, oil, policy.wetted_share, area, setup.air_c)
         };
         let parked = case.duty.parked_oil.filter(|_| case.duty.credit_parked_heat);
-        let top =
-            parked.map_or(policy.target_max_c, |oil| oil.as_celsius().max(policy.target_max_c));
+        let hottest = policy.target_max_c.max(CURVE_TOP_C);
+        let top = parked.map_or(hottest, |oil| oil.as_celsius().max(hottest));
         let curve = LossCurve::new(&loss, top);
         let mut tank = Self { capacity, rest, loss, curve, soak_c: setup.air_c };
         if let (Some(oil), Some(at)) = (parked, case.duty.parked_at) {
@@ -281,11 +286,14 @@ pub(super) fn heating(
         let why = if setup.soak_c < gate { HeatingWhy::WarmEnough } else { HeatingWhy::StartsCold };
         return Heating::without(HeatingStatus::NotNeeded, why);
     }
-    let circulated = element.place == ElementPlace::Circulated;
-    let below_mean = if circulated { 0.0 } else { policy.suction_below_mean_k };
-    let returned =
-        policy.return_share * tank.rest.at(15.0) / tank.capacity.at(15.0) * (floor - setup.soak_c);
-    let target = gate + below_mean + returned.max(0.0);
+    let target = heat::mean_target_c(
+        floor,
+        setup.soak_c,
+        tank.capacity.at(15.0),
+        tank.rest.at(15.0),
+        element.place,
+        policy,
+    );
 
     let mut fails = Vec::new();
     if gels {
@@ -299,9 +307,9 @@ pub(super) fn heating(
     }
 
     let pad = element.kind == ElementKind::Pad;
-    let share = if pad { policy.pad_share } else { 1.0 };
+    let share = heat::into_oil_w(element.kind, 1.0, policy);
     // A target past the top of the curve is past what is allowed too, and has no figures.
-    let figures = target <= policy.target_max_c;
+    let figures = target <= tank.curve.top_c();
     let way = |factor: f64| WarmUp::new(&tank.curve, &tank.capacity, tank.soak_c, target, factor);
     let (usual, worst) = (way(1.0), way(policy.loss_uncertainty));
     let seconds = case.duty.time_to_warm.as_seconds();
@@ -318,8 +326,8 @@ pub(super) fn heating(
         diameter: element.diameter.as_mm() / 1000.0,
     };
     // No immersion element in oil at or below its pour point: it cannot carry the heat away.
-    let solid =
-        !pad && setup.oil.pour_point().is_some_and(|pour| setup.soak_c <= pour.as_celsius());
+    let pour_c = setup.oil.pour_point().map(Temperature::as_celsius);
+    let solid = !pad && !heat::immersion_allowed(setup.soak_c, pour_c);
     let density_max = if pad {
         policy.pad_density
     } else {
@@ -341,12 +349,12 @@ pub(super) fn heating(
         other_w: supply.other_load.as_watts(),
     });
     let delivered = match (supply, element.rated_voltage) {
-        (Some(circuit), Some(rated)) => (circuit.volts / rated.as_volts()).powi(2),
+        (Some(circuit), Some(rated)) => heat::delivered_share(circuit.volts, rated.as_volts()),
         _ => 1.0,
     };
     let carried = supply.map_or(f64::INFINITY, |circuit| circuit.continuous_w(policy));
-    let flat_cm2 = case.reservoir.flat_surface.as_m2() * 1e4;
-    let surface_w = if pad { policy.pad_density * flat_cm2 } else { f64::INFINITY };
+    let flat_m2 = case.reservoir.flat_surface.as_m2();
+    let surface_w = if pad { heat::pad_most_w(flat_m2, policy) } else { f64::INFINITY };
 
     let mut heating = Heating::without(HeatingStatus::Sized, HeatingWhy::Gels);
     heating.whys.clear();

@@ -2,9 +2,9 @@
 
 use super::film::OilFilm;
 use super::policy::HeatPolicy;
-use crate::pump::words;
 use crate::solve;
 use crate::source::{Method, Source};
+use crate::words::words;
 
 words! {
     /// Heater in the oil, or a pad on the outside.

@@ -2,9 +2,9 @@
 
 use super::film::{self, OilFilm};
 use super::policy::HeatPolicy;
-use crate::pump::words;
 use crate::solve;
 use crate::source::{Method, Source};
+use crate::words::words;
 
 words! {
     /// How the tank stands in the wind.

@@ -15,4 +15,3 @@ pub use kind::{KindLimits, Neutral, PumpKind, Typical};
 pub use suction::{CHURCHILL_1977, InletPolicy, STRAINER, Strainer, SuctionLine, friction_factor};
 
 pub(crate) use inlet::GRAVITY;
-pub(crate) use kind::words;
