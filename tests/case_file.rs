@@ -239,6 +239,12 @@ fn one_message_a_fault() {
             "case.toml:13:14: oil[1].in_service: 2 oils are marked as in service; mark one",
         ),
         (
+            with(
+                "[[oil]]\nbase = \"mineral\"\nviscosity = { \"40 °C\" = \"46 mm²/s\", \"100 °F\" = \"240 SUS\" }\n",
+            ),
+            "case.toml:12:25: oil[1].viscosity.40 °C: the viscosities at 37.78 °C and 40 °C are under 3 K apart, so rounding would set the slope in the cold; keep one of the two",
+        ),
+        (
             with(&format!("{oil}viscosity_index = 900\n")),
             "case.toml:13:19: oil[1].viscosity_index: takes a number from -100 to 500, but is `900`",
         ),

@@ -63,6 +63,16 @@ pub enum OilError {
         /// Seconds given.
         seconds: f64,
     },
+    /// Two viscosities so close that rounding sets the slope between them.
+    #[error(
+        "the viscosities at {cold} °C and {warm} °C are under 3 K apart, so rounding would set the slope in the cold; keep one of the two"
+    )]
+    TooClose {
+        /// Colder temperature, °C.
+        cold: f64,
+        /// Warmer temperature, °C.
+        warm: f64,
+    },
     /// A viscosity measured where the oil is said not to flow.
     #[error(
         "a viscosity is given at {at} °C, but the pour point is {pour} °C: an oil that was measured flowed; check the two"
@@ -84,6 +94,10 @@ pub enum OilError {
         pour: f64,
     },
 }
+
+/// Least distance of two measured temperatures, K: 100 °F beside 40 °C would set the cold slope by
+/// rounding. This project's judgement.
+const LEAST_SPACING_K: f64 = 3.0;
 
 /// The likely range at one temperature.
 #[derive(Debug, Clone, Copy, PartialEq)]
@@ -164,6 +178,12 @@ impl Oil {
             }
         }
         let curve = ViscosityCurve::through(&points)?;
+        for (cold, warm) in curve.points().iter().zip(curve.points().iter().skip(1)) {
+            if warm.0 - cold.0 < LEAST_SPACING_K {
+                let round = |t: f64| (t * 100.0).round() / 100.0;
+                return Err(OilError::TooClose { cold: round(cold.0), warm: round(warm.0) });
+            }
+        }
         if let Some(pour) = pour_c {
             let at = curve.coldest().0;
             if at < pour {

@@ -125,7 +125,8 @@ impl Desk<'_> {
             | OilError::Curve(
                 CurveError::SameTemperature { at } | CurveError::OutOfRange { at, .. },
             )
-            | OilError::MeasuredBelowPour { at, .. } => point(*at),
+            | OilError::MeasuredBelowPour { at, .. }
+            | OilError::TooClose { warm: at, .. } => point(*at),
             OilError::CloudBelowPour { .. } => Some(key("cloud_point")),
             OilError::IndexWithout40 | OilError::IndexOutOfReach { .. } => {
                 Some(key("viscosity_index"))
