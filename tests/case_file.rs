@@ -157,7 +157,7 @@ fn one_message_a_fault() {
         ),
         (
             instead("\"200 L\"", "\"200 V\""),
-            "case.toml:7:14: reservoir.oil_volume: `V` is not a unit of volume; write for example `200 L` (units: L, mL, m³, gal, qt, imp gal, ft³, in³)",
+            "case.toml:7:14: reservoir.oil_volume: `V` is a unit of voltage, but a volume is needed; write for example `200 L`",
         ),
         // Words.
         (

@@ -1,8 +1,10 @@
 //! The quantity types, one macro row each.
 
-use super::number::{self, NoNumber, shown};
-use super::pressure;
-use super::units::{self, Dimension, fold};
+use super::error::QuantityError;
+use super::number::shown;
+use super::spelling::trim;
+use super::units::{self, Dimension};
+use super::{pressure, read};
 
 /// What one quantity type is: its noun, unit, range and an example to type.
 #[derive(Debug)]
@@ -22,82 +24,6 @@ pub struct Kind {
     reader: fn(&Self, &str) -> Result<f64, QuantityError>,
 }
 
-/// Why a text or number is not the quantity it should be.
-#[derive(Debug, Clone, PartialEq, thiserror::Error)]
-#[non_exhaustive]
-pub enum QuantityError {
-    /// Nothing was typed.
-    #[error("nothing is given; write for example `{example}`")]
-    Empty {
-        /// What could be typed.
-        example: String,
-    },
-    /// No number at the front.
-    #[error("`{text}` is not a number with a unit; write for example `{example}`")]
-    NoNumber {
-        /// What was found.
-        text: String,
-        /// What could be typed.
-        example: String,
-    },
-    /// `nan`, `inf` or too large to hold.
-    #[error("`{text}` is not a finite number; write for example `{example}`")]
-    NotFinite {
-        /// What was found.
-        text: String,
-        /// What could be typed.
-        example: String,
-    },
-    /// A comma that can be a decimal comma or a thousands mark.
-    #[error(
-        "`{text}` can be read in two ways; write the number without a thousands mark and with a decimal point"
-    )]
-    AmbiguousComma {
-        /// What was found.
-        text: String,
-    },
-    /// A number without a unit.
-    #[error("`{text}` has no unit; write for example `{example}`")]
-    NoUnit {
-        /// What was found.
-        text: String,
-        /// The same number with a unit.
-        example: String,
-    },
-    /// A unit this kind does not have.
-    #[error("`{unit}` is not a unit of {noun}; write for example `{example}` (units: {known})")]
-    UnknownUnit {
-        /// The unit found.
-        unit: String,
-        /// The kind.
-        noun: &'static str,
-        /// What could be typed.
-        example: String,
-        /// The units known, joined.
-        known: String,
-    },
-    /// Outside what the kind allows.
-    #[error("{noun} must be between {least} and {greatest} {unit}, but is {found}")]
-    OutOfRange {
-        /// The kind.
-        noun: &'static str,
-        /// Least value.
-        least: String,
-        /// Greatest value.
-        greatest: String,
-        /// Unit of the range.
-        unit: &'static str,
-        /// What was found, as typed or with its unit.
-        found: String,
-    },
-    /// A pressure on the wrong side of the atmosphere.
-    #[error("{0}")]
-    WrongPressure(String),
-    /// A viscosity given with a temperature that cannot be read.
-    #[error("{0}")]
-    Viscosity(String),
-}
-
 impl Kind {
     /// Reads a text to a value in [`Kind::unit`].
     ///
@@ -113,6 +39,15 @@ impl Kind {
     /// [`QuantityError::OutOfRange`], also for a value that is not finite.
     pub fn check(&self, value: f64) -> Result<f64, QuantityError> {
         self.check_found(value, || format!("{} {}", shown(value), self.unit))
+    }
+
+    /// Checks a value that was read. Rounding in a conversion may step over the end of the range by
+    /// a hair: that is the end.
+    pub(super) fn check_read(&self, value: f64, text: &str) -> Result<f64, QuantityError> {
+        let inside = value.clamp(self.least, self.greatest);
+        let hair = 1e-12 * inside.abs();
+        let value = if (value - inside).abs() <= hair { inside } else { value };
+        self.check_found(value, || trim(text).to_owned())
     }
 
     fn check_found(&self, value: f64, found: impl Fn() -> String) -> Result<f64, QuantityError> {
@@ -132,70 +67,8 @@ impl Kind {
     #[must_use]
     pub fn in_unit(&self, value: f64, unit: &str) -> Option<f64> {
         let (from, to) = (self.dimension.unit(self.unit)?, self.dimension.unit(unit)?);
-        if std::ptr::eq(from, to) {
-            return Some(value);
-        }
-        Some((value * from.factor + from.offset - to.offset) / to.factor)
+        Some(read::between(value, from, to))
     }
-}
-
-/// Number, then unit: the reader of most kinds.
-fn plain(kind: &Kind, text: &str) -> Result<f64, QuantityError> {
-    let (value, rest) = split(kind, text)?;
-    convert(kind, text, value, rest)
-}
-
-/// The number at the front and the text behind it.
-pub(super) fn split<'a>(kind: &Kind, text: &'a str) -> Result<(f64, &'a str), QuantityError> {
-    let text = text.trim();
-    let example = || kind.example.to_owned();
-    if text.is_empty() {
-        return Err(QuantityError::Empty { example: example() });
-    }
-    match number::leading(text) {
-        Ok(found) => Ok((found.value, found.rest.trim())),
-        Err(NoNumber::Missing) => {
-            Err(QuantityError::NoNumber { text: text.to_owned(), example: example() })
-        }
-        Err(NoNumber::NotFinite) => {
-            Err(QuantityError::NotFinite { text: text.to_owned(), example: example() })
-        }
-        Err(NoNumber::AmbiguousComma) => {
-            Err(QuantityError::AmbiguousComma { text: text.to_owned() })
-        }
-    }
-}
-
-/// A value with its unit text, converted to the kind's unit and checked.
-pub(super) fn convert(
-    kind: &Kind,
-    text: &str,
-    value: f64,
-    unit_text: &str,
-) -> Result<f64, QuantityError> {
-    if unit_text.is_empty() {
-        return Err(QuantityError::NoUnit {
-            text: text.trim().to_owned(),
-            example: format!("{} {}", shown(value), kind.unit),
-        });
-    }
-    let (Some(from), Some(to)) = (kind.dimension.unit(unit_text), kind.dimension.unit(kind.unit))
-    else {
-        let known: Vec<&str> =
-            kind.dimension.units.iter().filter_map(|u| u.spellings.first().copied()).collect();
-        return Err(QuantityError::UnknownUnit {
-            unit: unit_text.to_owned(),
-            noun: kind.noun,
-            example: format!("{} {}", shown(value), kind.unit),
-            known: known.join(", "),
-        });
-    };
-    let value = if std::ptr::eq(from, to) {
-        value
-    } else {
-        (value * from.factor + from.offset - to.offset) / to.factor
-    };
-    kind.check_found(value, || text.trim().to_owned())
 }
 
 /// A quantity type: built from a number in its own unit or from text with any known unit.
@@ -283,7 +156,7 @@ macro_rules! quantity {
     /// Every quantity kind there is.
     pub static KINDS: &[&Kind] = &[$($name::KIND),*];
     };
-    (@reader) => { plain };
+    (@reader) => { read::plain };
     (@reader $reader:path) => { $reader };
 }
 
@@ -302,7 +175,7 @@ quantity! {
 
     /// A density, or the density equal to a specific gravity against water at 60 °F.
     Density: "density" in "kg/m³", 600.0 ..= 1500.0,
-    new kg_per_m3, get as_kg_per_m3, of DENSITY, example "875 kg/m³";
+    new kg_per_m3, get as_kg_per_m3, of DENSITY, example "875 kg/m³", reader read::density;
 
     /// An absolute pressure. `5 inHg vacuum` is read as 101.325 kPa less 5 inHg.
     AbsolutePressure: "absolute pressure" in "kPa", 0.0 ..= 1000.0,
@@ -318,19 +191,19 @@ quantity! {
 
     /// An inside diameter of hose or pipe, or the diameter of a heater rod.
     Bore: "diameter" in "mm", 1.0 ..= 1000.0,
-    new mm, get as_mm, of LENGTH, example "50.8 mm";
+    new mm, get as_mm, of LENGTH, example "50.8 mm", reader read::compound;
 
     /// A thickness of insulation.
     Thickness: "thickness" in "mm", 0.0 ..= 500.0,
-    new mm, get as_mm, of LENGTH, example "25 mm";
+    new mm, get as_mm, of LENGTH, example "25 mm", reader read::compound;
 
     /// A length or height. Negative only where a height may be below its reference.
     Length: "length" in "m", -50.0 ..= 100.0,
-    new m, get as_m, of LENGTH, example "1.5 m";
+    new m, get as_m, of LENGTH, example "1.5 m", reader read::compound;
 
     /// Height of the site above sea level.
     Elevation: "elevation" in "m", -430.0 ..= 9000.0,
-    new m, get as_m, of LENGTH, example "640 m";
+    new m, get as_m, of LENGTH, example "640 m", reader read::compound;
 
     /// An area.
     Area: "area" in "m²", 0.0001 ..= 1000.0,
@@ -338,7 +211,7 @@ quantity! {
 
     /// A volume of oil.
     Volume: "volume" in "L", 0.1 ..= 1000000.0,
-    new litres, get as_litres, of VOLUME, example "200 L";
+    new litres, get as_litres, of VOLUME, example "200 L", reader read::fraction;
 
     /// A pump displacement per revolution.
     Displacement: "displacement" in "cm³", 0.1 ..= 10000.0,
@@ -350,7 +223,7 @@ quantity! {
 
     /// A power.
     Power: "power" in "W", 0.0 ..= 10000000.0,
-    new watts, get as_watts, of POWER, example "1500 W";
+    new watts, get as_watts, of POWER, example "1500 W", reader read::fraction;
 
     /// A voltage.
     Voltage: "voltage" in "V", 1.0 ..= 1000.0,
@@ -362,7 +235,7 @@ quantity! {
 
     /// A span of time.
     TimeSpan: "time" in "h", 0.0 ..= 10000.0,
-    new hours, get as_hours, of TIME, example "4 h";
+    new hours, get as_hours, of TIME, example "4 h", reader read::compound;
 
     /// A rotational speed.
     Rotation: "rotational speed" in "rpm", 1.0 ..= 20000.0,
@@ -409,12 +282,3 @@ impl TimeSpan {
         self.0 * 3600.0
     }
 }
-
-/// `true` if the unit text names a unit of this dimension.
-pub(super) fn names_unit(dimension: &Dimension, text: &str) -> bool {
-    let text = fold(text);
-    dimension.units.iter().any(|u| u.spellings.iter().any(|s| fold(s) == text))
-}
-
-#[cfg(test)]
-mod tests;

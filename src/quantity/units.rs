@@ -1,8 +1,10 @@
 //! Unit spellings and their factors, one table a dimension.
 //!
 //! Sources: factors are exact by definition unless noted; NIST SP 811 (2008), appendix B, gives the
-//! same figures. Spellings are compared after folding (see [`fold`]): `mm²/s` also stands for
-//! `mm2/s` and `mm^2/s`, `W/(m·K)` for `W/(m*K)`.
+//! same figures. Spellings need not list spaces, raised digits, signs for a product, a full stop at
+//! the end or a slip of case: `mm²/s` also stands for `mm2/s` and `mm^2/s`, `kW` for `kw`.
+
+use super::spelling;
 
 /// One unit: how it may be written and what it is worth.
 #[derive(Debug)]
@@ -25,11 +27,11 @@ pub struct Dimension {
 }
 
 impl Dimension {
-    /// The unit written as `spelling`, if this dimension has it.
+    /// The unit written as `spelling`, if this dimension has it. A slip of case (`kw`) is forgiven
+    /// unless milli and mega would be mixed up (`mPa`, `MPa`).
     #[must_use]
     pub fn unit(&self, spelling: &str) -> Option<&'static Unit> {
-        let wanted = fold(spelling);
-        self.units.iter().find(|u| u.spellings.iter().any(|s| fold(s) == wanted))
+        spelling::find(self, spelling)
     }
 }
 
@@ -41,27 +43,36 @@ const fn unit_with_zero(spellings: &'static [&'static str], factor: f64, offset:
     Unit { spellings, factor, offset }
 }
 
-/// One spelling for all ways to type it: no spaces, plain digits for raised ones, one sign for a product.
-pub(crate) fn fold(text: &str) -> String {
-    let mut out = String::with_capacity(text.len());
-    for c in text.chars() {
-        match c {
-            c if c.is_whitespace() => {}
-            '²' => out.push('2'),
-            '³' => out.push('3'),
-            '¹' => out.push('1'),
-            '⁻' | '−' => out.push('-'),
-            '^' => {}
-            '·' | '⋅' | '*' | '×' => out.push('.'),
-            'º' | '˚' => out.push('°'),
-            '℃' => out.push_str("°C"),
-            '℉' => out.push_str("°F"),
-            '\u{212A}' => out.push('K'),
-            c => out.push(c),
-        }
-    }
-    out
+/// Every dimension, the more usual first where a unit belongs to two.
+#[must_use]
+pub fn dimensions() -> &'static [&'static Dimension] {
+    DIMENSIONS
 }
+
+static DIMENSIONS: &[&Dimension] = &[
+    &TEMPERATURE,
+    &TEMPERATURE_DIFFERENCE,
+    &PRESSURE,
+    &KINEMATIC_VISCOSITY,
+    &DYNAMIC_VISCOSITY,
+    &LENGTH,
+    &AREA,
+    &VOLUME,
+    &MASS,
+    &DENSITY,
+    &POWER,
+    &VOLTAGE,
+    &CURRENT,
+    &TIME,
+    &ROTATION,
+    &FLOW,
+    &DISPLACEMENT,
+    &VELOCITY,
+    &THERMAL_CONDUCTIVITY,
+    &HEAT_TRANSFER_COEFFICIENT,
+    &HEAT_LOSS_RATE,
+    &WATT_DENSITY,
+];
 
 const INCH: f64 = 0.0254;
 const FOOT: f64 = 0.3048;
@@ -78,10 +89,14 @@ const GALLON: f64 = 3.785_411_784;
 pub(crate) static TEMPERATURE: Dimension = Dimension {
     name: "temperature",
     units: &[
-        unit(&["°C", "C", "degC", "deg C", "celsius"], 1.0),
-        unit_with_zero(&["°F", "F", "degF", "deg F", "fahrenheit"], 5.0 / 9.0, -160.0 / 9.0),
+        unit(&["°C", "C", "degC", "deg. C", "degrees C", "Celsius", "°Celsius"], 1.0),
+        unit_with_zero(
+            &["°F", "F", "degF", "deg. F", "degrees F", "Fahrenheit", "°Fahrenheit"],
+            5.0 / 9.0,
+            -160.0 / 9.0,
+        ),
         unit_with_zero(&["K", "kelvin"], 1.0, -273.15),
-        unit_with_zero(&["°R", "degR"], 5.0 / 9.0, -273.15),
+        unit_with_zero(&["°R", "degR", "Rankine"], 5.0 / 9.0, -273.15),
     ],
 };
 
@@ -98,8 +113,8 @@ pub(crate) static TEMPERATURE_DIFFERENCE: Dimension = Dimension {
 pub(crate) static KINEMATIC_VISCOSITY: Dimension = Dimension {
     name: "kinematic viscosity",
     units: &[
-        unit(&["mm²/s", "cSt", "cst", "cS"], 1.0),
-        unit(&["St", "cm²/s"], 100.0),
+        unit(&["mm²/s", "cSt", "cS", "mm²/sec", "mm²·s⁻¹", "centistoke", "centistokes"], 1.0),
+        unit(&["St", "cm²/s", "stokes"], 100.0),
         unit(&["m²/s"], 1e6),
         unit(&["ft²/s"], FOOT * FOOT * 1e6),
         unit(&["in²/s"], INCH * INCH * 1e6),
@@ -110,30 +125,31 @@ pub(crate) static KINEMATIC_VISCOSITY: Dimension = Dimension {
 pub(crate) static DYNAMIC_VISCOSITY: Dimension = Dimension {
     name: "dynamic viscosity",
     units: &[
-        unit(&["mPa·s", "mPas", "mPa s", "cP", "cp", "cps"], 1.0),
+        unit(&["mPa·s", "mPas", "mPa-s", "cP", "cps", "centipoise"], 1.0),
         unit(&["P", "poise"], 100.0),
-        unit(&["Pa·s", "Pas", "Pa s"], 1000.0),
+        unit(&["Pa·s", "Pas", "Pa-s"], 1000.0),
     ],
 };
 
-/// Base kPa.
+/// Base kPa. The columns of mercury and water are the conventional ones, NIST SP 811 (2008), B.8.
 pub(crate) static PRESSURE: Dimension = Dimension {
     name: "pressure",
     units: &[
         unit(&["kPa"], 1.0),
         unit(&["Pa"], 1e-3),
         unit(&["hPa"], 0.1),
-        unit(&["MPa"], 1e3),
-        unit(&["bar"], 100.0),
-        unit(&["mbar"], 0.1),
-        unit(&["psi", "PSI", "lbf/in²", "lb/in²"], PSI),
-        // Conventional inch of mercury, 3386.389 Pa: NIST SP 811 (2008), B.8.
-        unit(&["inHg", "in Hg", "\"Hg", "in. Hg", "inHG"], 3.386_389),
-        unit(&["mmHg", "mm Hg", "Torr", "torr"], 0.133_322_4),
+        unit(&["MPa", "N/mm²"], 1e3),
+        unit(&["bar", "bars"], 100.0),
+        unit(&["mbar", "millibar"], 0.1),
+        unit(&["psi", "lbf/in²", "lb/in²", "lbs/in²"], PSI),
+        unit(&["inHg", "\"Hg", "in. Hg", "in-Hg", "inches Hg", "inches of mercury"], 3.386_389),
+        unit(&["mmHg", "Torr"], 0.133_322_4),
+        unit(&["cmHg"], 1.333_224),
         unit(&["atm"], 101.325),
-        unit(&["kgf/cm²", "at"], 98.066_5),
-        unit(&["mH2O", "m H2O", "mWC", "mWS"], 9.806_65),
-        unit(&["inH2O", "in H2O"], 0.249_088_9),
+        unit(&["kgf/cm²", "kg/cm²", "kp/cm²", "at"], 98.066_5),
+        unit(&["mH2O", "mWC", "mWS"], 9.806_65),
+        unit(&["inH2O", "\"H2O", "in. H2O", "inWC", "inches of water"], 0.249_088_9),
+        unit(&["ftH2O"], 2.989_067),
     ],
 };
 
@@ -141,13 +157,13 @@ pub(crate) static PRESSURE: Dimension = Dimension {
 pub(crate) static LENGTH: Dimension = Dimension {
     name: "length",
     units: &[
-        unit(&["m", "metre", "meter"], 1.0),
+        unit(&["m", "metre", "metres", "meter", "meters"], 1.0),
         unit(&["mm"], 1e-3),
         unit(&["cm"], 1e-2),
         unit(&["km"], 1e3),
-        unit(&["in", "inch", "inches", "\"", "″", "in."], INCH),
-        unit(&["ft", "foot", "feet", "'", "′", "ft."], FOOT),
-        unit(&["yd"], 3.0 * FOOT),
+        unit(&["in", "inch", "inches", "\"", "''"], INCH),
+        unit(&["ft", "foot", "feet", "'"], FOOT),
+        unit(&["yd", "yard", "yards"], 3.0 * FOOT),
     ],
 };
 
@@ -158,8 +174,8 @@ pub(crate) static AREA: Dimension = Dimension {
         unit(&["m²", "sq m"], 1.0),
         unit(&["cm²", "sq cm"], 1e-4),
         unit(&["mm²"], 1e-6),
-        unit(&["ft²", "sq ft", "sqft"], FOOT * FOOT),
-        unit(&["in²", "sq in", "sqin"], INCH * INCH),
+        unit(&["ft²", "sq ft"], FOOT * FOOT),
+        unit(&["in²", "sq in"], INCH * INCH),
     ],
 };
 
@@ -167,15 +183,15 @@ pub(crate) static AREA: Dimension = Dimension {
 pub(crate) static VOLUME: Dimension = Dimension {
     name: "volume",
     units: &[
-        unit(&["L", "l", "ℓ", "litre", "liter", "litres", "liters", "dm³", "ltr"], 1.0),
-        unit(&["mL", "ml", "cm³", "cc"], 1e-3),
+        unit(&["L", "ℓ", "litre", "liter", "litres", "liters", "dm³", "ltr"], 1.0),
+        unit(&["mL", "cm³", "cc"], 1e-3),
         unit(&["m³"], 1e3),
-        // US liquid measures.
-        unit(&["gal", "US gal", "gallon", "gallons", "usgal"], GALLON),
+        // US liquid measures; the gallon is 231 in³.
+        unit(&["gal", "gals", "US gal", "U.S. gal", "gal (US)", "gallon", "gallons"], GALLON),
         unit(&["qt", "quart", "quarts"], GALLON / 4.0),
-        unit(&["imp gal", "gal UK", "UK gal"], 4.546_09),
-        unit(&["ft³", "cu ft"], FOOT * FOOT * FOOT * 1e3),
-        unit(&["in³", "cu in"], INCH * INCH * INCH * 1e3),
+        unit(&["imp gal", "imp. gal", "gal (UK)", "UK gal", "imperial gallons"], 4.546_09),
+        unit(&["ft³", "cu ft", "cu. ft"], FOOT * FOOT * FOOT * 1e3),
+        unit(&["in³", "cu in", "cu. in"], INCH * INCH * INCH * 1e3),
     ],
 };
 
@@ -184,11 +200,14 @@ pub(crate) static DISPLACEMENT: Dimension = Dimension {
     name: "displacement",
     units: &[
         unit(
-            &["cm³", "cm³/rev", "cm³/r", "cc", "cc/rev", "ccm", "mL", "mL/rev", "ml", "ml/rev"],
+            &["cm³", "cm³/rev", "cm³/r", "cm³/U", "cc", "cc/rev", "cc/r", "ccm", "mL", "mL/rev"],
             1.0,
         ),
-        unit(&["in³", "in³/rev", "in³/r", "cu in", "cu in/rev", "cir"], INCH * INCH * INCH * 1e6),
-        unit(&["L", "l", "L/rev"], 1000.0),
+        unit(
+            &["in³", "in³/rev", "in³/r", "cu in", "cu in/rev", "cu. in/rev", "cir"],
+            INCH * INCH * INCH * 1e6,
+        ),
+        unit(&["L", "L/rev"], 1000.0),
     ],
 };
 
@@ -196,9 +215,9 @@ pub(crate) static DISPLACEMENT: Dimension = Dimension {
 pub(crate) static MASS: Dimension = Dimension {
     name: "mass",
     units: &[
-        unit(&["kg"], 1.0),
+        unit(&["kg", "kgs"], 1.0),
         unit(&["g"], 1e-3),
-        unit(&["t", "tonne"], 1e3),
+        unit(&["t", "tonne", "tonnes"], 1e3),
         unit(&["lb", "lbs", "lbm"], POUND),
     ],
 };
@@ -209,12 +228,15 @@ pub(crate) static DENSITY: Dimension = Dimension {
     name: "density",
     units: &[
         unit(&["kg/m³"], 1.0),
-        unit(&["kg/L", "kg/l", "kg/dm³", "g/cm³", "g/mL", "g/ml", "t/m³"], 1e3),
-        unit(&["lb/ft³", "lbm/ft³", "lbf/ft³", "pcf"], POUND / (FOOT * FOOT * FOOT)),
-        unit(&["lb/gal", "lb/US gal", "ppg"], POUND / GALLON * 1e3),
+        unit(&["kg/L", "kg/dm³", "g/cm³", "g/mL", "g/cc", "t/m³"], 1e3),
+        unit(
+            &["lb/ft³", "lbs/ft³", "lbm/ft³", "lbf/ft³", "lb/cu ft", "pcf"],
+            POUND / (FOOT * FOOT * FOOT),
+        ),
+        unit(&["lb/gal", "lbs/gal", "lb/US gal", "ppg"], POUND / GALLON * 1e3),
         unit(&["N/m³"], 1.0 / GRAVITY),
         unit(&["kN/m³"], 1e3 / GRAVITY),
-        unit(&["SG", "sg", "specific gravity", "sp gr", "sp.gr."], WATER_60F),
+        unit(&["SG", "S.G", "specific gravity", "sp gr", "sp. gr"], WATER_60F),
     ],
 };
 
@@ -222,24 +244,26 @@ pub(crate) static DENSITY: Dimension = Dimension {
 pub(crate) static POWER: Dimension = Dimension {
     name: "power",
     units: &[
-        unit(&["W", "w", "watt", "watts"], 1.0),
-        unit(&["kW", "kw"], 1e3),
+        unit(&["W", "watt", "watts"], 1.0),
+        unit(&["kW", "kilowatt", "kilowatts"], 1e3),
         // Mechanical horsepower, 550 ft·lbf/s.
-        unit(&["hp", "HP"], 550.0 * FOOT * POUND * GRAVITY),
-        unit(&["BTU/h", "Btu/h", "Btu/hr", "BTU/hr"], BTU / 3600.0),
+        unit(&["hp", "bhp"], 550.0 * FOOT * POUND * GRAVITY),
+        // Metric horsepower, 75 kgf·m/s.
+        unit(&["PS"], 75.0 * GRAVITY),
+        unit(&["Btu/h", "Btu/hr"], BTU / 3600.0),
     ],
 };
 
 /// Base V.
 pub(crate) static VOLTAGE: Dimension = Dimension {
     name: "voltage",
-    units: &[unit(&["V", "v", "volt", "volts", "VAC", "Vac", "VDC"], 1.0), unit(&["kV"], 1e3)],
+    units: &[unit(&["V", "volt", "volts", "VAC", "V AC", "VDC"], 1.0), unit(&["kV"], 1e3)],
 };
 
 /// Base A.
 pub(crate) static CURRENT: Dimension = Dimension {
     name: "current",
-    units: &[unit(&["A", "a", "amp", "amps", "ampere"], 1.0), unit(&["mA"], 1e-3)],
+    units: &[unit(&["A", "amp", "amps", "ampere", "amperes"], 1.0), unit(&["mA"], 1e-3)],
 };
 
 /// Base h.
@@ -247,17 +271,17 @@ pub(crate) static TIME: Dimension = Dimension {
     name: "time",
     units: &[
         unit(&["h", "hr", "hrs", "hour", "hours"], 1.0),
-        unit(&["min", "minute", "minutes"], 1.0 / 60.0),
-        unit(&["s", "sec", "second", "seconds"], 1.0 / 3600.0),
+        unit(&["min", "mins", "minute", "minutes"], 1.0 / 60.0),
+        unit(&["s", "sec", "secs", "second", "seconds"], 1.0 / 3600.0),
         unit(&["d", "day", "days"], 24.0),
     ],
 };
 
 /// Base rpm.
 pub(crate) static ROTATION: Dimension = Dimension {
-    name: "speed",
+    name: "rotational speed",
     units: &[
-        unit(&["rpm", "RPM", "r/min", "1/min", "min⁻¹", "rev/min", "U/min"], 1.0),
+        unit(&["rpm", "r.p.m", "r/min", "1/min", "min⁻¹", "rev/min", "U/min", "tr/min"], 1.0),
         unit(&["1/s", "s⁻¹", "rps", "rev/s", "r/s", "Hz"], 60.0),
     ],
 };
@@ -266,11 +290,13 @@ pub(crate) static ROTATION: Dimension = Dimension {
 pub(crate) static FLOW: Dimension = Dimension {
     name: "flow",
     units: &[
-        unit(&["L/min", "l/min", "lpm", "LPM", "dm³/min"], 1.0),
-        unit(&["L/s", "l/s", "dm³/s"], 60.0),
+        unit(&["L/min", "lpm", "dm³/min"], 1.0),
+        unit(&["L/s", "dm³/s"], 60.0),
+        unit(&["L/h"], 1.0 / 60.0),
         unit(&["m³/h"], 1e3 / 60.0),
-        unit(&["cm³/s", "mL/s"], 0.06),
-        unit(&["gpm", "GPM", "gal/min", "US gal/min"], GALLON),
+        unit(&["cm³/s", "mL/s", "cc/s"], 0.06),
+        unit(&["cm³/min", "mL/min", "cc/min"], 1e-3),
+        unit(&["gpm", "gal/min", "US gal/min", "US gpm"], GALLON),
     ],
 };
 
@@ -278,11 +304,11 @@ pub(crate) static FLOW: Dimension = Dimension {
 pub(crate) static VELOCITY: Dimension = Dimension {
     name: "velocity",
     units: &[
-        unit(&["m/s"], 1.0),
-        unit(&["km/h", "kph", "kmh"], 1.0 / 3.6),
+        unit(&["m/s", "m/sec", "mps"], 1.0),
+        unit(&["km/h", "kph", "kmh", "kmph", "km/hr"], 1.0 / 3.6),
         unit(&["mph", "mi/h"], 0.447_04),
-        unit(&["kn", "kt", "knot", "knots"], 1852.0 / 3600.0),
-        unit(&["ft/s", "fps"], FOOT),
+        unit(&["kn", "kt", "kts", "knot", "knots"], 1852.0 / 3600.0),
+        unit(&["ft/s", "fps", "ft/sec"], FOOT),
         unit(&["ft/min", "fpm"], FOOT / 60.0),
     ],
 };
@@ -291,10 +317,20 @@ pub(crate) static VELOCITY: Dimension = Dimension {
 pub(crate) static THERMAL_CONDUCTIVITY: Dimension = Dimension {
     name: "thermal conductivity",
     units: &[
-        unit(&["W/(m·K)", "W/m·K", "W/mK", "W/m K", "W/(m·°C)"], 1.0),
-        unit(&["Btu/(h·ft·°F)", "Btu/h·ft·°F"], BTU / 3600.0 / FOOT * 9.0 / 5.0),
+        unit(&["W/(m·K)", "W/m·K", "W/mK", "W/(m·°C)", "W/m·°C"], 1.0),
+        unit(&["mW/(m·K)", "mW/m·K", "mW/mK"], 1e-3),
         unit(
-            &["Btu·in/(h·ft²·°F)", "Btu·in/h·ft²·°F"],
+            &["Btu/(h·ft·°F)", "Btu/h·ft·°F", "Btu/(hr·ft·°F)", "Btu/hr·ft·°F"],
+            BTU / 3600.0 / FOOT * 9.0 / 5.0,
+        ),
+        unit(
+            &[
+                "Btu·in/(h·ft²·°F)",
+                "Btu·in/h·ft²·°F",
+                "Btu·in/(hr·ft²·°F)",
+                "Btu·in/hr·ft²·°F",
+                "Btu-in/hr-ft²-°F",
+            ],
             BTU / 3600.0 * INCH / (FOOT * FOOT) * 9.0 / 5.0,
         ),
     ],
@@ -304,9 +340,15 @@ pub(crate) static THERMAL_CONDUCTIVITY: Dimension = Dimension {
 pub(crate) static HEAT_TRANSFER_COEFFICIENT: Dimension = Dimension {
     name: "heat transfer coefficient",
     units: &[
-        unit(&["W/(m²·K)", "W/m²·K", "W/m²K", "W/m² K", "W/(m²·°C)"], 1.0),
+        unit(&["W/(m²·K)", "W/m²·K", "W/m²K", "W/(m²·°C)", "W/m²·°C"], 1.0),
         unit(
-            &["Btu/(h·ft²·°F)", "Btu/h·ft²·°F", "BTU/(hr·ft²·°F)"],
+            &[
+                "Btu/(h·ft²·°F)",
+                "Btu/h·ft²·°F",
+                "Btu/(hr·ft²·°F)",
+                "Btu/hr·ft²·°F",
+                "Btu/hr-ft²-°F",
+            ],
             BTU / 3600.0 / (FOOT * FOOT) * 9.0 / 5.0,
         ),
     ],
@@ -318,7 +360,10 @@ pub(crate) static HEAT_LOSS_RATE: Dimension = Dimension {
     units: &[
         unit(&["W/K", "W/°C"], 1.0),
         unit(&["kW/K"], 1e3),
-        unit(&["Btu/(h·°F)", "Btu/h·°F", "BTU/(hr·°F)"], BTU / 3600.0 * 9.0 / 5.0),
+        unit(
+            &["Btu/(h·°F)", "Btu/h·°F", "Btu/(hr·°F)", "Btu/hr·°F", "Btu/hr-°F"],
+            BTU / 3600.0 * 9.0 / 5.0,
+        ),
     ],
 };
 
@@ -326,38 +371,9 @@ pub(crate) static HEAT_LOSS_RATE: Dimension = Dimension {
 pub(crate) static WATT_DENSITY: Dimension = Dimension {
     name: "watt density",
     units: &[
-        unit(&["W/cm²"], 1.0),
+        unit(&["W/cm²", "W/sq cm"], 1.0),
         unit(&["W/m²"], 1e-4),
         unit(&["kW/m²"], 0.1),
-        unit(&["W/in²"], 1.0 / (2.54 * 2.54)),
+        unit(&["W/in²", "W/sq in", "W/sq. in"], 1.0 / (2.54 * 2.54)),
     ],
 };
-
-/// All dimensions there are.
-#[must_use]
-pub fn dimensions() -> [&'static Dimension; 22] {
-    [
-        &TEMPERATURE,
-        &TEMPERATURE_DIFFERENCE,
-        &KINEMATIC_VISCOSITY,
-        &DYNAMIC_VISCOSITY,
-        &PRESSURE,
-        &LENGTH,
-        &AREA,
-        &VOLUME,
-        &DISPLACEMENT,
-        &MASS,
-        &DENSITY,
-        &POWER,
-        &VOLTAGE,
-        &CURRENT,
-        &TIME,
-        &ROTATION,
-        &FLOW,
-        &VELOCITY,
-        &THERMAL_CONDUCTIVITY,
-        &HEAT_TRANSFER_COEFFICIENT,
-        &HEAT_LOSS_RATE,
-        &WATT_DENSITY,
-    ]
-}

@@ -1,7 +1,9 @@
 //! Viscosities as data sheets print them: kinematic, dynamic, or Saybolt Universal seconds.
 
-use super::kinds::{KinematicViscosity, Quantity, QuantityError, Temperature};
+use super::error::QuantityError;
+use super::kinds::{KinematicViscosity, Quantity, Temperature};
 use super::number::{leading, shown};
+use super::spelling::trim;
 use super::units::DYNAMIC_VISCOSITY;
 
 /// A dynamic viscosity, mPa·s.
@@ -42,7 +44,24 @@ pub enum ViscosityReading {
     Saybolt(SayboltTime),
 }
 
-const SAYBOLT: &[&str] = &["SUS", "SSU", "sus", "ssu", "SUV", "Saybolt"];
+/// `true` for the names of Saybolt Universal seconds.
+pub(super) fn is_saybolt(unit: &str) -> bool {
+    ["SUS", "SSU", "SUV", "Saybolt", "Saybolt seconds"].iter().any(|s| s.eq_ignore_ascii_case(unit))
+}
+
+/// The unit, and the temperature behind `at` or `@`.
+fn unit_and_temperature(text: &str) -> (&str, Option<&str>) {
+    // ASCII letters only are changed, so places stay the same.
+    let lower = text.to_ascii_lowercase();
+    let word = lower.find(" at ").map(|at| (at, " at ".len()));
+    match word.or_else(|| lower.find('@').map(|at| (at, 1))) {
+        Some((at, long)) => (
+            trim(text.get(..at).unwrap_or_default()),
+            Some(trim(text.get(at + long..).unwrap_or_default())),
+        ),
+        None => (trim(text), None),
+    }
+}
 
 impl std::str::FromStr for ViscosityReading {
     type Err = QuantityError;
@@ -55,16 +74,12 @@ impl std::str::FromStr for ViscosityReading {
                 .and_then(KinematicViscosity::of)
                 .map(Self::Kinematic);
         };
-        let (unit, at) =
-            match number.rest.split_once(" at ").or_else(|| number.rest.split_once('@')) {
-                Some((unit, at)) => (unit.trim(), Some(at.trim())),
-                None => (number.rest.trim(), None),
-            };
-        if SAYBOLT.contains(&unit) {
+        let (unit, at) = unit_and_temperature(number.rest);
+        if is_saybolt(unit) {
             if !(32.0..=1e8).contains(&number.value) {
                 return Err(QuantityError::Viscosity(format!(
                     "`{}` is outside the Saybolt Universal scale, which starts at 32 SUS",
-                    text.trim()
+                    trim(text)
                 )));
             }
             let at = at.map(str::parse).transpose()?;
@@ -73,7 +88,7 @@ impl std::str::FromStr for ViscosityReading {
         if at.is_some() {
             return Err(QuantityError::Viscosity(format!(
                 "`{}` names a temperature, which only a Saybolt time needs; write for example `1600 mm²/s`",
-                text.trim()
+                trim(text)
             )));
         }
         if let Some(found) = DYNAMIC_VISCOSITY.unit(unit) {
@@ -82,7 +97,7 @@ impl std::str::FromStr for ViscosityReading {
                 .ok_or_else(|| {
                     QuantityError::Viscosity(format!(
                         "dynamic viscosity must be between 0.1 and 2e7 mPa·s, but is {}",
-                        text.trim()
+                        trim(text)
                     ))
                 });
         }
@@ -94,6 +109,9 @@ impl std::str::FromStr for ViscosityReading {
                 example: format!("{} mm²/s", shown(number.value)),
                 known: "mm²/s, cSt, mPa·s, cP, SUS".to_owned(),
             },
+            QuantityError::WrongKind { unit, of, example, .. } => {
+                QuantityError::WrongKind { unit, of, noun: "viscosity", example }
+            }
             other => other,
         })
     }

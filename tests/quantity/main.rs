@@ -1,0 +1,6 @@
+//! Quantities: every unit recomputed with another library, what people type, what is refused.
+
+mod messages;
+mod properties;
+mod reading;
+mod units;
