@@ -2,6 +2,7 @@
 //!
 //! Letters as in the standard: `Z`, `A`, `B`; `W = log10(log10(Z))`; T in K, ν in mm²/s.
 
+use crate::quantity::shown;
 use crate::source::{Method, Source};
 
 /// ASTM D341 through the measured points.
@@ -103,7 +104,7 @@ pub enum CurveError {
     )]
     TooFewPoints,
     /// Two points at one temperature.
-    #[error("two viscosities are given at {at} °C; keep one")]
+    #[error("two viscosities are given at {} °C; keep one", shown(*at))]
     SameTemperature {
         /// The temperature, °C.
         at: f64,

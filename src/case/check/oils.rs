@@ -166,6 +166,14 @@ impl Desk<'_> {
             let row_key = format!("{key}.{at}");
             self.note(&row_key, &text, From::Given);
             match (at.trim_matches('"').parse::<Temperature>(), text.parse::<ViscosityReading>()) {
+                (Ok(at), Ok(ViscosityReading::Saybolt(time)))
+                    if time.at.is_some_and(|said| (said - at).as_kelvin().abs() > 0.05) =>
+                {
+                    self.fault(
+                        &row_key,
+                        format!("`{text}` names another temperature than its own key; keep one of the two"),
+                    );
+                }
                 (Ok(at), Ok(reading)) => points.push((at, reading)),
                 (Err(error), _) => self.fault(&row_key, format!("as a temperature: {error}")),
                 (_, Err(error)) => self.fault(&row_key, error.to_string()),
