@@ -344,3 +344,29 @@ fn the_hump_of_the_transition_is_bounded() {
     let at = |nu: f64| inlet.pressure_kpa(q, nu, 870.0);
     assert!(at(hump) < at(0.8 * hump) && at(hump) < at(1.25 * hump), "{hump}");
 }
+
+#[test]
+fn lowest_temperature_of_machine_b() {
+    // Reference computation with fluids 1.3.1, 60 kPa at idle, sea level. The densities at 15 °C are
+    // not printed there: 875 and 865 kg/m³, usual for the classes, are taken.
+    use coldsump::oil::{Bulk, ViscosityCurve};
+    use coldsump::quantity::Density;
+    for (kv40, kv100, density, want) in
+        [(46.0, 6.8, 875.0, -8.250127), (32.0, 6.3, 865.0, -20.47053)]
+    {
+        let curve = ViscosityCurve::through(&[(40.0, kv40), (100.0, kv100)]).unwrap();
+        let bulk = Bulk::from_density_15(Density::kg_per_m3(density).unwrap());
+        let inlet = B.inlet(SEA, true);
+        let margin = |t: f64| inlet.pressure_kpa(B.idle(), curve.at(t), bulk.density(t)) - 60.0;
+        let (mut cold, mut warm) = (-40.0, 40.0);
+        while warm - cold > 1e-6 {
+            let middle = f64::midpoint(cold, warm);
+            if margin(middle) < 0.0 {
+                cold = middle;
+            } else {
+                warm = middle;
+            }
+        }
+        close(warm, want, 0.1, "reference computation with fluids 1.3.1; density not printed");
+    }
+}
