@@ -370,3 +370,22 @@ fn lowest_temperature_of_machine_b() {
         close(warm, want, 0.1, "reference computation with fluids 1.3.1; density not printed");
     }
 }
+
+#[test]
+fn nitrogen_precharge_falls_as_real_gas() {
+    // (bar gauge, at °C, to °C, bar gauge, share allowed). CoolProp 8.0.0, nitrogen at constant density.
+    let rows = [
+        (30.0, 20.0, -40.0, 23.156, 0.005),
+        (100.0, 20.0, -40.0, 74.307, 0.01),
+        (100.0, 20.0, -20.0, 82.914, 0.01),
+        (100.0, 20.0, 60.0, 116.954, 0.01),
+        (200.0, 20.0, -40.0, 141.42, 0.015),
+    ];
+    for (bar, at, to, want, share) in rows {
+        let found = coldsump::pump::precharge_kpa(bar * 100.0, at, to).unwrap() / 100.0;
+        assert!((found / want - 1.0).abs() < share, "{bar} bar to {to} °C: {found}, not {want}");
+    }
+    assert_eq!(coldsump::pump::precharge_kpa(3000.0, 20.0, -80.0), None);
+    let same = coldsump::pump::precharge_kpa(3000.0, 20.0, 20.0).unwrap();
+    assert!((same - 3000.0).abs() < 1e-3);
+}

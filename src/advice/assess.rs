@@ -2,7 +2,8 @@
 
 use super::first_turn::{self, Circulation, FirstTurn};
 use super::heating::{self, Heating, HeatingStatus, Tank};
-use super::limits::{Edge, LIMITS, LimitId, Outcome, Side};
+use super::limits::{Edge, LIMITS, LimitId, Outcome, Side, Why};
+use super::say::{Figure, Fill, Reason};
 use super::setup::Setup;
 use crate::case::{Case, FluidKind};
 use crate::oil::{Estimate, Oil};
@@ -67,15 +68,6 @@ impl Verdict {
             Self::NotSuited => "not suited",
         }
     }
-}
-
-/// A reason: an id that does not change and a text that may.
-#[derive(Debug, Clone, PartialEq, Eq)]
-pub struct Reason {
-    /// The id.
-    pub id: &'static str,
-    /// The text.
-    pub text: String,
 }
 
 /// Everything the first tier says of one oil in one case.
@@ -239,48 +231,62 @@ fn floor(
 /// Verdict and reasons.
 fn judge(setup: &Setup<'_>, gels: bool, found: &mut Assessment) {
     let case = setup.case;
-    let mut because = |id, text: String| found.reasons.push(Reason { id, text });
+    let mut because = |id, template: &str, fills: &[(&'static str, Fill)]| {
+        found.reasons.push(Reason::new(id, template, fills));
+    };
     let mut suited = true;
     for result in &found.limits {
         if let (Side::Start, Outcome::Unattainable(why)) = (result.side, result.outcome) {
             suited = false;
-            because("start-limit-unattainable", format!("{}: {why}", result.id.id()));
+            because(
+                "start-limit-unattainable",
+                "{limit}: {why}",
+                &[("limit", result.id.id().into()), ("why", why.to_string().into())],
+            );
+        }
+        if let Outcome::NotChecked(why @ Why::TypicalLimitDoesNotFit) = result.outcome {
+            because(
+                "limit-does-not-fit",
+                "{limit} not checked: {why}",
+                &[("limit", result.id.id().into()), ("why", why.to_string().into())],
+            );
         }
     }
-    let max = case.duty.oil_temperature_max;
     let low = found.low_at_max;
+    let mut thin = |id, short: &str, least: f64| {
+        because(
+            id,
+            "at {max} it may thin to {low}, under the pump's {short} of {least}",
+            &[
+                ("max", Figure::Temperature(case.duty.oil_temperature_max.as_celsius()).into()),
+                ("low", Figure::Viscosity(low).into()),
+                ("short", short.into()),
+                ("least", Figure::Viscosity(least).into()),
+            ],
+        );
+    };
     if low < case.pump.viscosity_min_short.as_mm2_per_s() {
         suited = false;
-        because(
-            "too-thin-hot",
-            format!(
-                "at {max} it may thin to {low:.1} mm²/s, under the pump's short minimum of {}",
-                case.pump.viscosity_min_short
-            ),
-        );
+        thin("too-thin-hot", "short minimum", case.pump.viscosity_min_short.as_mm2_per_s());
     } else if low < case.pump.viscosity_min.as_mm2_per_s() {
-        because(
-            "thin-hot",
-            format!(
-                "at {max} it may thin to {low:.1} mm²/s, under the pump's minimum of {}",
-                case.pump.viscosity_min
-            ),
-        );
+        thin("thin-hot", "minimum", case.pump.viscosity_min.as_mm2_per_s());
     }
     if case.duty.fluid == FluidKind::Biodegradable && setup.oil.biodegradable() != Some(true) {
         suited = false;
         because(
             "not-biodegradable",
-            "a biodegradable oil is asked for, and it is not known to be one".to_owned(),
+            "a biodegradable oil is asked for, and it is not known to be one",
+            &[],
         );
     }
     if gels {
-        because("gels", "it gels in hoses and pilot lines at the soak temperature".to_owned());
+        because("gels", "it gels in hoses and pilot lines at the soak temperature", &[]);
     }
     if setup.stands_too_long() {
         because(
             "standing",
-            "a vegetable oil may set solid above its pour point after days in the cold".to_owned(),
+            "a vegetable oil may set solid above its pour point after days in the cold",
+            &[],
         );
     }
     if let (Some(found), Some(most)) =
@@ -289,22 +295,26 @@ fn judge(setup: &Setup<'_>, gels: bool, found: &mut Assessment) {
         if found > most.as_kpa() {
             because(
                 "case-pressure",
-                format!(
-                    "the case drain line builds {found:.0} kPa in the cold, over the {most} allowed"
-                ),
+                "the case drain line builds {found} in the cold, over the {most} allowed",
+                &[
+                    ("found", Figure::Pressure(found).into()),
+                    ("most", Figure::Pressure(most.as_kpa()).into()),
+                ],
             );
         }
     }
     if setup.oil.class_only() {
         because(
             "class-only",
-            "known by its class alone: limits of the class, not a measured oil".to_owned(),
+            "known by its class alone: limits of the class, not a measured oil",
+            &[],
         );
     }
     if setup.oil.pour_point().is_none() {
         because(
             "pour-point-unknown",
-            "the pour point is not given, so gelling was not checked".to_owned(),
+            "the pour point is not given, so gelling was not checked",
+            &[],
         );
     }
     let in_hand = found.start_floor.at_c.map(|floor| found.soak_c - floor);
@@ -325,16 +335,20 @@ fn judge(setup: &Setup<'_>, gels: bool, found: &mut Assessment) {
     if found.verdict == Verdict::NeedsHeat
         && found.tank_soak_c >= found.start_floor.at_c.unwrap_or(f64::INFINITY)
     {
-        because("pump-cold", "the tank is warm enough, but pump and hoses are not".to_owned());
+        because("pump-cold", "the tank is warm enough, but pump and hoses are not", &[]);
     }
     if unproven && in_hand.is_some_and(|k| k >= 0.0) {
         because(
             "inlet-unproven",
-            "the suction line was not checked: measure the hose's outside diameter and its length"
-                .to_owned(),
+            "the suction line was not checked: measure the hose's outside diameter and its length",
+            &[],
         );
     }
     if let Some(k) = in_hand.filter(|k| (0.0..case.policy.limits.in_hand_k).contains(k)) {
-        because("little-in-hand", format!("only {k:.1} K over its floor at the soak"));
+        because(
+            "little-in-hand",
+            "only {in_hand} over its floor at the soak",
+            &[("in_hand", Figure::Difference(k).into())],
+        );
     }
 }

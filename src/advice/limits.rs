@@ -1,6 +1,6 @@
 //! The one table of limits: id, side, method, and the temperature from which each is met.
 
-use super::setup::Setup;
+use super::setup::{Setup, unproven_or_given};
 use crate::pump::INLET_BALANCE;
 use crate::solve;
 use crate::source::{Method, Source};
@@ -291,10 +291,7 @@ fn line_flow(setup: &Setup<'_>, _: Edge) -> Outcome {
 
 /// The start limit of the pump, tightened where the inlet cannot be checked.
 fn viscosity_start(setup: &Setup<'_>, edge: Edge) -> Outcome {
-    let limit = setup
-        .case
-        .unproven_start_max
-        .unwrap_or_else(|| setup.case.pump.viscosity_start_max.as_mm2_per_s());
+    let limit = unproven_or_given(setup.case);
     if limit <= 0.0 {
         return Outcome::Unattainable(Why::NoPressureLeft);
     }

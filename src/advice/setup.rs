@@ -100,3 +100,9 @@ impl<'a> Setup<'a> {
             && self.case.duty.standing.as_hours() > self.case.policy.limits.standing_after_h
     }
 }
+
+/// The start limit that counts, mm²/s: the pump's, or the tighter one where the inlet cannot be
+/// checked. Zero or less: none is thin enough.
+pub(super) fn unproven_or_given(case: &Case) -> f64 {
+    case.unproven_start_max.unwrap_or_else(|| case.pump.viscosity_start_max.as_mm2_per_s())
+}

@@ -126,6 +126,26 @@ impl CaseFile {
         Ok(())
     }
 
+    /// Keeps only the oils at these places, from 0 in file order, and numbers them anew.
+    pub fn keep_oils(&mut self, keep: &[usize]) {
+        let mut entries = BTreeMap::new();
+        for (key, entry) in std::mem::take(&mut self.entries) {
+            let of_oil = key.strip_prefix("oil[").and_then(|rest| rest.split_once(']'));
+            let moved = match of_oil {
+                None => Some(key),
+                Some((number, rest)) => number.parse::<usize>().ok().and_then(|number| {
+                    let to = keep.iter().position(|at| at + 1 == number)?;
+                    Some(format!("oil[{}]{rest}", to + 1))
+                }),
+            };
+            if let Some(key) = moved {
+                entries.insert(key, entry);
+            }
+        }
+        self.entries = entries;
+        self.oils = keep.len();
+    }
+
     /// `oil.KEY` to `oil[n].KEY`; other keys as they are.
     fn resolve(&mut self, key: &str) -> Result<String, Fault> {
         let fault = |message| Err(Fault { place: Place::Set, key: key.to_owned(), message });

@@ -1,6 +1,8 @@
 //! The checked case: what every later step works on.
 
 use super::clock::Clock;
+use super::fault::Faults;
+use super::file::CaseFile;
 use super::policy::Policy;
 use crate::heat::{ElementKind, ElementPlace, Exposure};
 use crate::oil::Oil;
@@ -10,6 +12,7 @@ use crate::quantity::{
     HeatLossRate, HeatTransferCoefficient, KinematicViscosity, Length, Mass, Power, Rotation,
     Temperature, ThermalConductivity, Thickness, TimeSpan, Velocity, Voltage, Volume,
 };
+use std::sync::Arc;
 
 /// One machine at one site, with the oils and the supply to choose from; checked.
 ///
@@ -53,6 +56,45 @@ pub struct Case {
     pub assumptions: Vec<Assumption>,
     /// Every input used, with where it came from.
     pub inputs: Vec<Input>,
+    /// The file it was checked from, for changing one value and checking again.
+    pub(super) file: Arc<CaseFile>,
+}
+
+/// One key set to a text: what `--set`, a lever, a sweep and an answer are.
+#[derive(Debug, Clone, PartialEq, Eq)]
+pub struct Edit {
+    /// The key.
+    pub key: String,
+    /// The text; `none` takes the key out.
+    pub value: String,
+}
+
+impl Edit {
+    /// An edit.
+    #[must_use]
+    pub fn new(key: &str, value: &str) -> Self {
+        Self { key: key.to_owned(), value: value.to_owned() }
+    }
+}
+
+impl Case {
+    /// The same case with keys set over it, checked again.
+    ///
+    /// # Errors
+    /// An unknown key, or what [`CaseFile::check`] finds wrong.
+    pub fn with(&self, edits: &[Edit]) -> Result<Self, Faults> {
+        let mut file = (*self.file).clone();
+        for edit in edits {
+            file.set(&edit.key, &edit.value).map_err(|fault| Faults(vec![fault]))?;
+        }
+        file.check()
+    }
+
+    /// The case lists its own oils; else the built-in classes stand in.
+    #[must_use]
+    pub fn lists_oils(&self) -> bool {
+        self.file.oils() > 0
+    }
 }
 
 /// How results are shown.

@@ -9,11 +9,13 @@ use clap::{Args, Parser, Subcommand, ValueEnum};
 #[command(
     version,
     after_help = "Examples:
-  coldsump assess examples/skarn-loader.toml
-  coldsump assess examples/skarn-loader.toml --set \"site.minimum_temperature=-30 °C\"
+  coldsump advise examples/skarn-loader.toml
+  coldsump advise examples/skarn-loader.toml --set \"site.minimum_temperature=-30 °C\"
+  coldsump advise loader.toml --format markdown -o loader.md
   coldsump oil HM-46 --at \"-40..100 °C by 10\"
 
-Exit codes: 0 answered, 1 internal or I/O failure, 2 wrong input or call, 130 interrupted."
+Exit codes: 0 advice given and a plan starts the machine (with its cautions), 1 internal or I/O
+failure, 2 wrong input or call, 3 advice given but no plan starts it, 130 interrupted."
 )]
 pub(crate) struct Cli {
     #[command(subcommand)]
@@ -44,6 +46,14 @@ pub(crate) enum ColorWhen {
 
 #[derive(Debug, Subcommand)]
 pub(crate) enum Command {
+    /// Advice for a case: which oil, which heater, which steps, what can hurt
+    #[command(after_help = "Examples:
+  coldsump advise loader.toml
+  coldsump advise loader.toml --format markdown -o loader.md
+  coldsump advise loader.toml --set \"suction.bore=63.5 mm\"
+  coldsump advise *.toml --format json        one line a case
+  cat loader.toml | coldsump advise -")]
+    Advise(AdviseArgs),
     /// Every oil of a case: viscosity at the soak, limits, floors, heating
     #[command(after_help = "Examples:
   coldsump assess loader.toml
@@ -78,6 +88,38 @@ pub(crate) enum OilFormat {
 pub(crate) enum UnitsArg {
     Metric,
     Us,
+}
+
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub(crate) enum AdviseFormat {
+    Text,
+    Json,
+    Markdown,
+}
+
+#[derive(Debug, Args)]
+pub(crate) struct AdviseArgs {
+    /// Case files; `-` reads standard input
+    #[arg(required = true, value_name = "CASE")]
+    pub(crate) cases: Vec<std::path::PathBuf>,
+    /// How to write the advice
+    #[arg(long, value_enum, default_value = "text")]
+    pub(crate) format: AdviseFormat,
+    /// Write to a file, whole or not at all
+    #[arg(short, long, value_name = "FILE")]
+    pub(crate) output: Option<std::path::PathBuf>,
+    /// Overwrite the file
+    #[arg(long, requires = "output")]
+    pub(crate) force: bool,
+    /// Units to show
+    #[arg(long, value_enum)]
+    pub(crate) units: Option<UnitsArg>,
+    /// Only oils of this name; may be repeated
+    #[arg(long, value_name = "NAME")]
+    pub(crate) oil: Vec<String>,
+    /// Set a key of the case, `none` takes it out; may be repeated
+    #[arg(long, value_name = "KEY=VALUE")]
+    pub(crate) set: Vec<String>,
 }
 
 #[derive(Debug, Args)]

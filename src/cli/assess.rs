@@ -71,6 +71,11 @@ pub(crate) enum Trouble {
 
 /// A case file with keys set over it, checked.
 pub(crate) fn case(path: &Path, sets: &[String]) -> Result<Case, Trouble> {
+    file(path, sets)?.check().map_err(|faults| Trouble::Wrong(faults.to_string()))
+}
+
+/// A case file with keys set over it.
+pub(crate) fn file(path: &Path, sets: &[String]) -> Result<CaseFile, Trouble> {
     let (name, text) = output::read(path).map_err(Trouble::Io)?;
     let mut file = CaseFile::read(&name, &text);
     for set in sets {
@@ -81,5 +86,5 @@ pub(crate) fn case(path: &Path, sets: &[String]) -> Result<Case, Trouble> {
         };
         file.set(key, value).map_err(|fault| Trouble::Wrong(fault.to_string()))?;
     }
-    file.check().map_err(|faults| Trouble::Wrong(faults.to_string()))
+    Ok(file)
 }

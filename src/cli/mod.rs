@@ -1,5 +1,6 @@
 //! Arguments, commands, exit codes: thin.
 
+mod advise;
 mod args;
 mod assess;
 mod oil;
@@ -11,6 +12,8 @@ use std::process::ExitCode;
 
 /// Advice given, and a plan starts the machine.
 pub(crate) const DONE: u8 = 0;
+/// Advice given, no plan starts the machine.
+pub(crate) const NO_PLAN: u8 = 3;
 /// Internal or I/O failure.
 pub(crate) const FAILED: u8 = 1;
 /// Wrong input or call; good cases are still answered.
@@ -21,11 +24,12 @@ pub(crate) fn main() -> ExitCode {
     let done = match cli.command {
         None => {
             eprintln!("coldsump: which oil, which heater, which steps on the coldest morning\n");
-            eprintln!("try: coldsump assess CASE.toml");
+            eprintln!("try: coldsump advise CASE.toml");
             eprintln!("try: coldsump oil HM-46 --at \"-40..100 °C by 10\"");
             eprintln!("try: coldsump --help");
             Ok(WRONG)
         }
+        Some(Command::Advise(args)) => advise::run(&args, &cli.look),
         Some(Command::Assess(args)) => assess::run(&args, &cli.look),
         Some(Command::Oil(args)) => oil::run(&args, &cli.look),
     };

@@ -43,6 +43,33 @@ pub(crate) fn put(text: &str) -> Result<()> {
     Ok(())
 }
 
+/// Writes a file, whole or not at all: a new one beside it, then renamed.
+pub(crate) fn write(path: &Path, text: &str, force: bool) -> Result<()> {
+    let shown = path.display();
+    if !force && path.symlink_metadata().is_ok() {
+        anyhow::bail!("{shown} is there already\n\ntry: --force, or another name");
+    }
+    let folder = match path.parent() {
+        Some(folder) if !folder.as_os_str().is_empty() => folder,
+        _ => Path::new("."),
+    };
+    let mut name = std::ffi::OsString::from(".");
+    name.push(path.file_name().with_context(|| format!("{shown} names no file"))?);
+    name.push(format!(".{}.part", std::process::id()));
+    let part = folder.join(name);
+    let done = std::fs::File::create(&part)
+        .and_then(|mut file| {
+            file.write_all(text.as_bytes())?;
+            file.sync_all()
+        })
+        .and_then(|()| std::fs::rename(&part, path));
+    if done.is_err() {
+        // Nothing half-written stays; that the part may not be there is no further trouble.
+        let _ = std::fs::remove_file(&part);
+    }
+    done.with_context(|| format!("cannot write {shown}"))
+}
+
 /// The text of a file and the name messages call it by; `-` is standard input.
 pub(crate) fn read(path: &Path) -> Result<(String, String)> {
     let (name, bytes) = if path == Path::new("-") {

@@ -113,6 +113,12 @@ impl SuctionLine {
         }
     }
 
+    /// A strainer sits in it.
+    #[must_use]
+    pub fn has_strainer(&self) -> bool {
+        self.strainer > 0.0
+    }
+
     /// Relative roughness 0.005 and less: the friction factor stays under 0.051 over Re 2000.
     #[must_use]
     pub fn is_smooth(&self) -> bool {

@@ -3,6 +3,9 @@
 //!
 //! Invariant: a figure in a document carries the JSON pointer of the value it shows.
 
+use super::units::Shown;
+use crate::advice::{Part, Say};
+
 /// A whole document.
 #[derive(Debug, Clone, PartialEq, Default)]
 pub struct Document {
@@ -17,6 +20,8 @@ pub enum Block {
     Title(Line),
     /// A heading inside it.
     Heading(Line),
+    /// A heading inside a heading.
+    Subheading(Line),
     /// A paragraph.
     Text(Line),
     /// Name and value, one a line.
@@ -30,6 +35,8 @@ pub enum Block {
     },
     /// A list.
     List(Vec<Line>),
+    /// Numbered steps: number, what to do, and lines that belong to it.
+    Steps(Vec<(usize, Vec<Line>)>),
 }
 
 /// A run of words and figures.
@@ -69,28 +76,43 @@ impl Line {
     /// Adds plain words.
     #[must_use]
     pub fn words(mut self, text: impl Into<String>) -> Self {
-        self.0.push(Span { text: text.into(), pointer: None, tone: Tone::Plain });
+        self.0.push(Span { text: clean(text.into()), pointer: None, tone: Tone::Plain });
         self
     }
 
     /// Adds words that matter.
     #[must_use]
     pub fn strong(mut self, text: impl Into<String>) -> Self {
-        self.0.push(Span { text: text.into(), pointer: None, tone: Tone::Strong });
+        self.0.push(Span { text: clean(text.into()), pointer: None, tone: Tone::Strong });
         self
     }
 
     /// Adds words beside the point.
     #[must_use]
     pub fn faint(mut self, text: impl Into<String>) -> Self {
-        self.0.push(Span { text: text.into(), pointer: None, tone: Tone::Faint });
+        self.0.push(Span { text: clean(text.into()), pointer: None, tone: Tone::Faint });
         self
     }
 
     /// Adds a figure with the pointer of its JSON value.
     #[must_use]
     pub fn figure(mut self, text: impl Into<String>, pointer: impl Into<String>) -> Self {
-        self.0.push(Span { text: text.into(), pointer: Some(pointer.into()), tone: Tone::Plain });
+        self.0.push(Span { text: clean(text.into()), pointer: Some(pointer.into()), tone: Tone::Plain });
+        self
+    }
+
+    /// Adds a sentence; its figures lie under `pointer/figures`.
+    #[must_use]
+    pub fn say(mut self, say: &Say, pointer: &str, shown: Shown) -> Self {
+        for part in &say.0 {
+            self = match part {
+                Part::Words(words) => self.words(words.clone()),
+                Part::Figure { key, figure } => self.figure(
+                    shown.figure(*figure),
+                    format!("{pointer}/figures/{key}{}", figure.suffix()),
+                ),
+            };
+        }
         self
     }
 
@@ -121,10 +143,22 @@ impl Document {
 impl Block {
     fn lines(&self) -> Vec<&Line> {
         match self {
-            Self::Title(line) | Self::Heading(line) | Self::Text(line) => vec![line],
+            Self::Title(line) | Self::Heading(line) | Self::Subheading(line) | Self::Text(line) => {
+                vec![line]
+            }
             Self::Pairs(pairs) => pairs.iter().map(|(_, line)| line).collect(),
             Self::Table { rows, .. } => rows.iter().flatten().collect(),
             Self::List(lines) => lines.iter().collect(),
+            Self::Steps(steps) => steps.iter().flat_map(|(_, lines)| lines).collect(),
         }
+    }
+}
+
+/// Control characters, terminal escapes among them, are no words: they become spaces.
+fn clean(text: String) -> String {
+    if text.chars().any(char::is_control) {
+        text.chars().map(|c| if c.is_control() { ' ' } else { c }).collect()
+    } else {
+        text
     }
 }

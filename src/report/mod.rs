@@ -3,16 +3,20 @@
 //! Invariants: nothing below this room knows colour or terminal; the JSON structure lives only in
 //! `wire`; every figure in a document carries the JSON pointer of its value.
 
+mod advice;
 mod assessment;
 mod document;
+mod markdown;
 mod oil;
 mod text;
 mod units;
 mod wire;
 
+pub use advice::advice;
 pub use assessment::assessment;
 pub use document::{Block, Document, Line, Span, Tone};
+pub use markdown::markdown;
 pub use oil::{oil_points, oil_points_csv};
 pub use text::{Look, ascii, text};
 pub use units::Shown;
-pub use wire::{assessment_json, oil_points_json, six};
+pub use wire::{advice_json, assessment_json, oil_points_json, six};

@@ -44,6 +44,20 @@ fn render(out: &mut String, block: &Block, look: Look) {
             out.push('\n');
         }
         Block::Heading(line) => push_wrapped(out, line, look, 0, true),
+        Block::Subheading(line) => push_wrapped(out, line, look, 1, true),
+        Block::Steps(steps) => {
+            for (number, lines) in steps {
+                for (row, line) in lines.iter().enumerate() {
+                    if row == 0 {
+                        let mark = format!("{number:>4}. ");
+                        out.push_str(&mark);
+                        push_wrapped_from(out, line, look, mark.len(), mark.len(), false);
+                    } else {
+                        push_wrapped(out, line, look, 8, false);
+                    }
+                }
+            }
+        }
         Block::Text(line) => push_wrapped(out, line, look, 2, false),
         Block::Pairs(pairs) => {
             let name_width = pairs.iter().map(|(name, _)| name.width()).max().unwrap_or(0);
@@ -65,10 +79,11 @@ fn render(out: &mut String, block: &Block, look: Look) {
     }
 }
 
+/// A table no wider than the page: the widest columns give way, their cells go on below.
 fn table(out: &mut String, head: &[String], rows: &[Vec<Line>], look: Look) {
     let texts: Vec<Vec<String>> =
         rows.iter().map(|row| row.iter().map(Line::text).collect()).collect();
-    let widths: Vec<usize> = head
+    let mut widths: Vec<usize> = head
         .iter()
         .enumerate()
         .map(|(column, name)| {
@@ -76,28 +91,78 @@ fn table(out: &mut String, head: &[String], rows: &[Vec<Line>], look: Look) {
             cells.chain([name.width()]).max().unwrap_or(0)
         })
         .collect();
-    let mut put = |cells: &[String], tone: Tone| {
-        let mut row = String::from(" ");
-        for (column, (cell, width)) in cells.iter().zip(&widths).enumerate() {
-            let space = " ".repeat(width.saturating_sub(cell.width()));
-            row.push(' ');
-            // Words to the left, figures to the right.
-            if column == 0 {
-                row.push_str(cell);
-                row.push_str(&space);
-            } else {
-                row.push_str(&space);
-                row.push_str(cell);
-            }
-            row.push(' ');
+    // Two columns of space before and between.
+    let most = look.width.saturating_sub(2 * widths.len());
+    while widths.iter().sum::<usize>() > most {
+        match widths.iter_mut().max() {
+            Some(widest) if *widest > LEAST_COLUMN => *widest -= 1,
+            _ => break,
         }
-        out.push_str(&styled(row.trim_end(), tone, look));
-        out.push('\n');
+    }
+    let mut put = |cells: &[String], tone: Tone| {
+        let wrapped: Vec<Vec<String>> =
+            cells.iter().zip(&widths).map(|(cell, width)| wrap(cell, *width)).collect();
+        let height = wrapped.iter().map(Vec::len).max().unwrap_or(0);
+        for line in 0..height {
+            let mut row = String::new();
+            for (column, (cell, width)) in wrapped.iter().zip(&widths).enumerate() {
+                let text = cell.get(line).map_or("", String::as_str);
+                let space = " ".repeat(width.saturating_sub(text.width()));
+                row.push_str("  ");
+                // Words to the left, figures to the right.
+                if column == 0 {
+                    row.push_str(text);
+                    row.push_str(&space);
+                } else {
+                    row.push_str(&space);
+                    row.push_str(text);
+                }
+            }
+            out.push_str(&styled(row.trim_end(), tone, look));
+            out.push('\n');
+        }
     };
     put(head, Tone::Faint);
     for row in &texts {
         put(row, Tone::Plain);
     }
+}
+
+/// No column gets narrower than this.
+const LEAST_COLUMN: usize = 6;
+
+/// Words of a cell in lines of a width; a word longer than that is cut.
+fn wrap(text: &str, width: usize) -> Vec<String> {
+    let mut lines = vec![String::new()];
+    for word in text.split(' ').flat_map(|word| pieces(word, width)) {
+        let Some(last) = lines.last_mut() else { continue };
+        if last.is_empty() {
+            last.push_str(&word);
+        } else if last.width() + 1 + word.width() <= width {
+            last.push(' ');
+            last.push_str(&word);
+        } else {
+            lines.push(word);
+        }
+    }
+    lines
+}
+
+/// A word in pieces of a width at most.
+fn pieces(word: &str, width: usize) -> Vec<String> {
+    if word.width() <= width {
+        return vec![word.to_owned()];
+    }
+    let mut out = vec![String::new()];
+    for c in word.chars() {
+        let Some(last) = out.last_mut() else { continue };
+        if last.width() + c.to_string().width() > width.max(1) {
+            out.push(c.to_string());
+        } else {
+            last.push(c);
+        }
+    }
+    out
 }
 
 fn push_wrapped(out: &mut String, line: &Line, look: Look, indent: usize, strong: bool) {
@@ -118,9 +183,11 @@ fn push_wrapped_from(
     let mut glue = false;
     for Span { text, tone, .. } in &line.0 {
         let tone = if strong { Tone::Strong } else { *tone };
-        let mut pieces = text.split(' ').peekable();
+        let room = look.width.saturating_sub(indent).max(1);
+        let words: Vec<String> = text.split(' ').flat_map(|word| pieces(word, room)).collect();
+        let mut words = words.iter().map(String::as_str).peekable();
         let mut leading = true;
-        while let Some(word) = pieces.next() {
+        while let Some(word) = words.next() {
             let spaced = !leading || !glue;
             leading = false;
             if word.is_empty() {
@@ -139,7 +206,7 @@ fn push_wrapped_from(
             out.push_str(&styled(word, tone, look));
             column += word.width();
             first = false;
-            glue = pieces.peek().is_none();
+            glue = words.peek().is_none();
         }
     }
     out.push('\n');

@@ -1,5 +1,6 @@
 //! Figures as people read them, in metric or US units.
 
+use crate::advice::{Figure, Part, Say};
 use crate::case::Units;
 
 /// Shows figures in one set of units.
@@ -9,6 +10,61 @@ pub struct Shown(pub Units);
 impl Shown {
     const fn us(self) -> bool {
         matches!(self.0, Units::Us)
+    }
+
+    /// A figure of a sentence.
+    #[must_use]
+    pub fn figure(self, figure: Figure) -> String {
+        match figure {
+            Figure::Temperature(v) => self.temperature(v),
+            Figure::Difference(v) => self.difference(v),
+            Figure::Viscosity(v) => self.viscosity(v),
+            Figure::Power(v) => self.power(v),
+            Figure::Energy(v) => energy(v),
+            Figure::Vacuum(v) => self.vacuum(v),
+            Figure::Pressure(v) => self.pressure(v),
+            Figure::Speed(v) => format!("{} rpm", fixed(v, 0)),
+            Figure::Time(v) => self.time(v),
+            Figure::Length(v) => self.length(v),
+            Figure::Elevation(v) => self.elevation(v),
+            Figure::WattDensity(v) => self.watt_density(v),
+            Figure::Area(v) => self.area(v),
+            Figure::Current(v) => format!("{} A", fixed(v, 1)),
+            Figure::Percent(v) => format!("{} %", fixed(v, 0)),
+            Figure::Number(v) => fixed(v, 0),
+        }
+    }
+
+    /// A sentence as plain text.
+    #[must_use]
+    pub fn say(self, say: &Say) -> String {
+        say.0
+            .iter()
+            .map(|part| match part {
+                Part::Words(words) => words.clone(),
+                Part::Figure { figure, .. } => self.figure(*figure),
+            })
+            .collect()
+    }
+
+    /// A small length in mm.
+    #[must_use]
+    pub fn length(self, mm: f64) -> String {
+        if self.us() {
+            format!("{} in", two_figures(mm / 25.4))
+        } else {
+            format!("{} mm", two_figures(mm))
+        }
+    }
+
+    /// A height above the sea in m.
+    #[must_use]
+    pub fn elevation(self, m: f64) -> String {
+        if self.us() {
+            format!("{} ft", fixed(m / 0.3048, 0))
+        } else {
+            format!("{} m", fixed(m, 0))
+        }
     }
 
     /// A temperature in °C, to a tenth.
@@ -113,6 +169,12 @@ impl Shown {
             format!("{} m/s", fixed(m_s, 1))
         }
     }
+}
+
+/// An energy in kWh.
+#[must_use]
+pub(super) fn energy(kwh: f64) -> String {
+    format!("{} kWh", fixed(kwh, 1))
 }
 
 /// A number with so many decimals, never `-0`.

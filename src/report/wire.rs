@@ -1,7 +1,11 @@
 //! The JSON contract: the only place that knows its keys.
 
-use crate::advice::{Assessment, Fitted, Heating, LimitResult, Outcome};
-use crate::case::{Case, From, MinimumHow};
+use super::units::Shown;
+use crate::advice::{
+    Advice, AskFor, Assessment, Bound, Choice, Confirm, Fitted, Heating, Lever, LimitResult, Outcome,
+    Plan, Reason, Say, Step,
+};
+use crate::case::{Assumption, Case, From, MinimumHow, Units};
 use crate::oil::{Oil, reported};
 use serde_json::{Map, Value, json};
 
@@ -38,11 +42,15 @@ fn finish(value: Value) -> Value {
                 }
             } else {
                 let missing = format!("no figure for {}", nulls.join(", "));
-                let why = match map.get("why").and_then(Value::as_str) {
-                    Some(why) => format!("{why} ({missing})"),
-                    None => missing,
+                let why = match map.remove("why") {
+                    Some(Value::Array(mut reasons)) => {
+                        reasons.push(json!({ "id": "no-figure", "text": missing }));
+                        Value::Array(reasons)
+                    }
+                    Some(Value::String(why)) => Value::String(format!("{why} ({missing})")),
+                    _ => Value::String(missing),
                 };
-                map.insert("why".to_owned(), Value::String(why));
+                map.insert("why".to_owned(), why);
             }
             Value::Object(map)
         }
@@ -53,6 +61,73 @@ fn finish(value: Value) -> Value {
 /// The assessment of a case as JSON: `oils`, `site`, `assumptions`, `inputs`.
 #[must_use]
 pub fn assessment_json(case: &Case, oils: &[(&Oil, Assessment)]) -> Value {
+    let mut map = head(case);
+    map.insert("oils".to_owned(), oils.iter().map(|(oil, found)| oil_json(oil, found)).collect());
+    let governs = |key: &str| oils.iter().any(|(_, found)| found.hangs_on(key));
+    let assumptions: Value =
+        case.assumptions.iter().map(|one| assumption_json(one, governs(&one.key))).collect();
+    map.insert("assumptions".to_owned(), assumptions);
+    map.insert("inputs".to_owned(), inputs(case));
+    finish(Value::Object(map))
+}
+
+/// The advice as JSON.
+#[must_use]
+pub fn advice_json(case: &Case, advice: &Advice) -> Value {
+    let decision = &advice.decision;
+    let mut map = head(case);
+    let mut put = |key: &str, value: Value| map.insert(key.to_owned(), value);
+    put("oils", case.oils.iter().zip(&decision.oils).map(|(oil, f)| oil_json(oil, f)).collect());
+    put("plans", decision.plans.iter().map(plan_json).collect());
+    put("ask_for", ask_for_json(&decision.ask_for));
+    put("choice", choice_json(case, advice, &decision.choice));
+    put(
+        "procedure",
+        advice.procedure.iter().enumerate().map(|(at, step)| step_json(at, step)).collect(),
+    );
+    put(
+        "cautions",
+        advice
+            .cautions
+            .iter()
+            .map(|caution| {
+                with_figures(
+                    json!({
+                        "id": caution.row.id,
+                        "signal": caution.row.signal().id(),
+                        "stop": caution.row.stop,
+                        "text": caution.row.text,
+                        "because": metric(&caution.because),
+                        "source": format!("{} [{}]", caution.row.source, caution.row.read.tag()),
+                    }),
+                    &[&caution.because],
+                )
+            })
+            .collect(),
+    );
+    put("assumptions", advice.confirm.iter().map(confirm_json).collect());
+    put("levers", advice.levers.iter().map(lever_json).collect());
+    put(
+        "evidence",
+        advice
+            .evidence
+            .iter()
+            .map(|one| {
+                json!({
+                    "at": one.at,
+                    "method": one.method.name,
+                    "source": one.method.source.to_string(),
+                    "reach": one.reach,
+                })
+            })
+            .collect(),
+    );
+    put("inputs", inputs(case));
+    put("record", json!(advice.record));
+    finish(Value::Object(map))
+}
+
+fn head(case: &Case) -> Map<String, Value> {
     let how = |how: MinimumHow| match how {
         MinimumHow::Given | MinimumHow::AsMinimum => "given",
         MinimumHow::Record => "record",
@@ -60,7 +135,7 @@ pub fn assessment_json(case: &Case, oils: &[(&Oil, Assessment)]) -> Value {
         MinimumHow::ReturnLevel => "return-level",
         MinimumHow::Class => "class",
     };
-    finish(json!({
+    let value = json!({
         "format": FORMAT,
         "program": { "name": env!("CARGO_PKG_NAME"), "version": env!("CARGO_PKG_VERSION") },
         "title": case.title,
@@ -72,25 +147,173 @@ pub fn assessment_json(case: &Case, oils: &[(&Oil, Assessment)]) -> Value {
             "air_kpa": crate::air::atmosphere_kpa(case.site.elevation.as_m()),
             "wind_m_s": case.site.wind.as_m_per_s(),
         },
-        "oils": oils.iter().map(|(oil, found)| oil_json(oil, found)).collect::<Vec<_>>(),
-        "assumptions": case.assumptions.iter().map(|assumption| json!({
-            "key": assumption.key,
-            "value": assumption.value,
-            "source": assumption.source,
-            "ask": assumption.ask,
-            "governs": oils.iter().any(|(_, found)| found.hangs_on(&assumption.key)),
+    });
+    match value {
+        Value::Object(map) => map,
+        _ => Map::new(),
+    }
+}
+
+fn inputs(case: &Case) -> Value {
+    case.inputs
+        .iter()
+        .map(|input| {
+            json!({
+                "key": input.key,
+                "value": input.value,
+                "from": match input.from {
+                    From::Given => "given",
+                    From::Typical => "typical",
+                    From::Policy => "policy",
+                    From::Climate => "climate",
+                },
+            })
+        })
+        .collect()
+}
+
+fn assumption_json(assumption: &Assumption, governs: bool) -> Value {
+    json!({
+        "key": assumption.key,
+        "value": assumption.value,
+        "source": assumption.source,
+        "ask": assumption.ask,
+        "governs": governs,
+    })
+}
+
+fn confirm_json(confirm: &Confirm) -> Value {
+    let mut value = assumption_json(&confirm.assumption, confirm.governs);
+    if let (Some(range), Value::Object(map)) = (&confirm.range, &mut value) {
+        let ends = |floors: [Option<f64>; 2]| {
+            json!({ "from_c": floors[0], "to_c": floors[1] })
+        };
+        map.insert(
+            "range".to_owned(),
+            json!({
+                "from": range.from,
+                "to": range.to,
+                "start_floor": ends(range.start_floor_c),
+                "work_floor": ends(range.work_floor_c),
+            }),
+        );
+    }
+    value
+}
+
+/// A sentence in metric units.
+fn metric(say: &Say) -> String {
+    Shown(Units::Metric).say(say)
+}
+
+/// Puts the figures of sentences beside them.
+fn with_figures(mut value: Value, says: &[&Say]) -> Value {
+    let figures: Map<String, Value> = says
+        .iter()
+        .flat_map(|say| say.figures())
+        .map(|(key, figure)| (format!("{key}{}", figure.suffix()), json!(figure.value())))
+        .collect();
+    if let (false, Value::Object(map)) = (figures.is_empty(), &mut value) {
+        map.insert("figures".to_owned(), Value::Object(figures));
+    }
+    value
+}
+
+fn reason_json(reason: &Reason) -> Value {
+    with_figures(json!({ "id": reason.id, "text": metric(&reason.text) }), &[&reason.text])
+}
+
+fn plan_json(plan: &Plan) -> Value {
+    json!({
+        "plan": plan.kind.id(),
+        "oil": plan.oil,
+        "heater_w": plan.heater_w,
+        "elements_w": plan.elements_w,
+        "hold_w": plan.hold_w,
+        "energy_kwh": plan.energy_kwh,
+        "ready_s": plan.ready_s,
+        "allowed": plan.allowed,
+        "why": plan.why.iter().map(reason_json).collect::<Vec<_>>(),
+    })
+}
+
+fn ask_for_json(ask: &AskFor) -> Value {
+    let grades: Vec<u32> = ask.grades.iter().map(|(number, _)| *number).collect();
+    let range = grades.first().zip(grades.last()).map(|(from, to)| [*from, *to]);
+    json!({
+        "pour_point_max_c": ask.pour_point_max_c,
+        "viscosity_max_mm2_s": ask.viscosity_max,
+        "at_c": ask.at_c,
+        "viscosity_min_mm2_s": ask.viscosity_min,
+        "at_max_c": ask.at_max_c,
+        "iso_vg": range,
+        "viscosity_index_min": ask.index_min(),
+        "grades": ask.grades.iter().map(|(number, index)| json!({
+            "iso_vg": number, "viscosity_index_min": index,
         })).collect::<Vec<_>>(),
-        "inputs": case.inputs.iter().map(|input| json!({
-            "key": input.key,
-            "value": input.value,
-            "from": match input.from {
-                From::Given => "given",
-                From::Typical => "typical",
-                From::Policy => "policy",
-                From::Climate => "climate",
-            },
-        })).collect::<Vec<_>>(),
-    }))
+        "why": ask.why,
+    })
+}
+
+fn choice_json(case: &Case, advice: &Advice, choice: &Choice) -> Value {
+    let plan = advice.decision.chosen();
+    json!({
+        "plan": choice.plan,
+        "oil": plan.and_then(|plan| case.oils.get(plan.oil)).map(Oil::name),
+        "heater_w": plan.and_then(|plan| plan.heater_w),
+        "switch_on": choice.switch_on.map(|(clock, days)| json!({
+            "clock": clock.to_string(), "days_before": days,
+        })),
+        "why": choice.why.iter().map(reason_json).collect::<Vec<_>>(),
+    })
+}
+
+fn step_json(at: usize, step: &Step) -> Value {
+    let mut value = json!({
+        "step": at + 1,
+        "phase": step.phase.id(),
+        "do": metric(&step.text),
+        "stop_if": step.stop_if.iter().map(metric).collect::<Vec<_>>(),
+        "cautions": step.cautions,
+    });
+    if let Value::Object(map) = &mut value {
+        if let Some(gate) = step.gate {
+            let (key, bound) = match gate.bound {
+                Bound::AtLeastC(v) => ("at_least_c", v),
+                Bound::AtMostK(v) => ("at_most_k", v),
+                Bound::AtMostKpa(v) => ("at_most_kpa", v),
+                Bound::AtMostRpm(v) => ("at_most_rpm", v),
+                Bound::AtLeastS(v) => ("at_least_s", v),
+            };
+            map.insert("gate".to_owned(), json!({ "reading": gate.reading.id(), key: bound }));
+        }
+        if let Some(seconds) = step.expect_s {
+            map.insert("expect_s".to_owned(), json!(seconds));
+        }
+    }
+    let mut says = vec![&step.text];
+    says.extend(&step.stop_if);
+    with_figures(value, &says)
+}
+
+fn lever_json(lever: &Lever) -> Value {
+    let set: Map<String, Value> =
+        lever.edits.iter().map(|edit| (edit.key.clone(), json!(edit.value))).collect();
+    let found = lever.found();
+    with_figures(
+        json!({
+            "id": lever.id,
+            "set": set,
+            "oil": lever.oil_name,
+            "start_floor_c": found.and_then(|found| found.start_floor.at_c),
+            "work_floor_c": found.and_then(|found| found.work_floor.at_c),
+            "needed_w": found.and_then(|found| found.heating.needed_w),
+            "heater_w": found.and_then(|found| found.heating.heater_w),
+            "verdict": found.map(|found| found.verdict.id()),
+            "text": metric(&lever.text),
+        }),
+        &[&lever.text],
+    )
 }
 
 fn oil_json(oil: &Oil, found: &Assessment) -> Value {
@@ -108,9 +331,7 @@ fn oil_json(oil: &Oil, found: &Assessment) -> Value {
         "in_service": oil.in_service(),
         "reference_only": oil.reference_only(),
         "verdict": found.verdict.id(),
-        "reasons": found.reasons.iter().map(|reason| json!({
-            "id": reason.id, "text": reason.text,
-        })).collect::<Vec<_>>(),
+        "reasons": found.reasons.iter().map(reason_json).collect::<Vec<_>>(),
         "viscosity_index": oil.viscosity_index(),
         "soak_c": found.soak_c,
         "tank_soak_c": found.tank_soak_c,

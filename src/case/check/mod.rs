@@ -11,6 +11,7 @@ use super::file::CaseFile;
 use super::model::{Case, Circuit, Duty, Pump, Reservoir, Site, Units};
 use crate::quantity::Quantity;
 use desk::Desk;
+use std::sync::Arc;
 
 impl CaseFile {
     /// Checks the file and fills what is not given from typical values.
@@ -86,6 +87,7 @@ impl Desk<'_> {
             policy,
             assumptions: std::mem::take(&mut self.assumptions),
             inputs: std::mem::take(&mut self.inputs),
+            file: Arc::new(self.file.clone()),
         })
     }
 

@@ -1,0 +1,115 @@
+//! `coldsump advise`.
+
+use super::args::{AdviseArgs, AdviseFormat, LookArgs};
+use super::assess::{Trouble, file};
+use super::{DONE, FAILED, NO_PLAN, WRONG, output};
+use anyhow::Result;
+use coldsump::case::{Case, Units};
+use coldsump::{advice, report};
+use std::path::Path;
+
+pub(crate) fn run(args: &AdviseArgs, look: &LookArgs) -> Result<u8> {
+    let look = output::look(look);
+    let mut code = DONE;
+    let mut out = String::new();
+    for (at, path) in args.cases.iter().enumerate() {
+        let case = match case(path, &args.set, &args.oil) {
+            Ok(case) => case,
+            Err(Trouble::Wrong(message)) => {
+                eprintln!("{message}");
+                code = worse(code, WRONG);
+                continue;
+            }
+            Err(Trouble::Io(error)) => {
+                eprintln!("coldsump: {error:#}");
+                code = worse(code, FAILED);
+                continue;
+            }
+        };
+        let advice = advice::advise(&case);
+        if !advice.decision.starts() {
+            code = worse(code, NO_PLAN);
+        }
+        let units: Units = output::units(args.units).unwrap_or(case.units);
+        let document = || report::advice(&case, &advice, units);
+        if at > 0 && args.format != AdviseFormat::Json {
+            out.push('\n');
+        }
+        match args.format {
+            AdviseFormat::Json => {
+                let json = report::advice_json(&case, &advice);
+                out.push_str(&if args.cases.len() == 1 {
+                    serde_json::to_string_pretty(&json)?
+                } else {
+                    serde_json::to_string(&json)?
+                });
+                out.push('\n');
+            }
+            AdviseFormat::Markdown => out.push_str(&report::markdown(&document())),
+            AdviseFormat::Text => {
+                let look = if args.output.is_some() {
+                    report::Look { color: false, ..look }
+                } else {
+                    look
+                };
+                out.push_str(&report::text(&document(), look));
+            }
+        }
+        if args.output.is_none() {
+            output::put(&out)?;
+            out.clear();
+        }
+    }
+    if let Some(path) = &args.output {
+        if out.is_empty() {
+            return Ok(code);
+        }
+        output::write(path, &out, args.force)?;
+    }
+    Ok(code)
+}
+
+/// The graver of two exit codes: a failure, then wrong input, then no plan.
+pub(crate) const fn worse(one: u8, other: u8) -> u8 {
+    const fn grave(code: u8) -> u8 {
+        match code {
+            DONE => 0,
+            NO_PLAN => 1,
+            WRONG => 2,
+            _ => 3,
+        }
+    }
+    if grave(other) > grave(one) { other } else { one }
+}
+
+/// A case with keys set over it, and only some of its oils.
+pub(crate) fn case(path: &Path, sets: &[String], oils: &[String]) -> Result<Case, Trouble> {
+    let mut file = file(path, sets)?;
+    let case = file.check().map_err(|faults| Trouble::Wrong(faults.to_string()))?;
+    if oils.is_empty() {
+        return Ok(case);
+    }
+    let names: Vec<&str> = case.oils.iter().map(coldsump::oil::Oil::name).collect();
+    if let Some(missing) = oils.iter().find(|oil| !names.contains(&oil.as_str())) {
+        return Err(Trouble::Wrong(format!(
+            "{}: no oil of the name {missing:?}\n\ntry: --oil {:?}",
+            path.display(),
+            names.join("\" or \"")
+        )));
+    }
+    let keep: Vec<usize> = names
+        .iter()
+        .enumerate()
+        .filter(|(_, name)| oils.iter().any(|oil| oil == *name))
+        .map(|(at, _)| at)
+        .collect();
+    if case.lists_oils() {
+        file.keep_oils(&keep);
+    } else {
+        for (at, name) in keep.iter().filter_map(|at| names.get(*at)).enumerate() {
+            file.set(&format!("oil[{}].class", at + 1), name)
+                .map_err(|fault| Trouble::Wrong(fault.to_string()))?;
+        }
+    }
+    file.check().map_err(|faults| Trouble::Wrong(faults.to_string()))
+}
