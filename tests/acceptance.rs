@@ -2,7 +2,7 @@
 //! without looking at the program's output. Powers are those needed; the heater is the next size up
 //! that also covers a tank which loses 40 % more.
 
-use coldsump::advice::{self, Assessment, HeatingStatus, LimitId};
+use coldsump::advice::{self, Advice, Assessment, HeatingStatus, LimitId, Plan, PlanKind};
 use coldsump::case::{Case, CaseFile};
 
 /// A mid-size loader.
@@ -233,6 +233,7 @@ fn case_9_no_suction_line_is_never_a_plain_cold_start() {
     let found = found("-5 °C", &[PAO22, &[("suction", "none")]]);
     assert_eq!(found.verdict.id(), "starts-cold-inlet-unproven");
     let text = &found.reasons.iter().find(|reason| reason.id == "inlet-unproven").unwrap().text;
+    let text = format!("{text:?}");
     assert!(text.contains("outside diameter") && text.contains("length"), "{text}");
 }
 
@@ -274,5 +275,184 @@ fn case_12_an_element_above_the_suction() {
         assert_eq!(found.heating.status, HeatingStatus::CannotReach);
         assert!(found.heating.whys.contains(&advice::HeatingWhy::AboveSuction));
         assert!(found.heating.fitted.is_some_and(|f| f.status == HeatingStatus::CannotReach));
+    }
+}
+
+// From here on the whole advice.
+
+/// The loader with several oils, the first in service.
+fn advised(minimum: &str, oils: &[&[(&str, &str)]], sets: &[(&str, &str)]) -> Advice {
+    let mut file = CaseFile::read("loader", LOADER);
+    file.set("site.minimum_temperature", minimum).unwrap();
+    for (at, oil) in oils.iter().enumerate() {
+        for (key, text) in *oil {
+            file.set(&key.replacen("oil.", &format!("oil[{}].", at + 1), 1), text).unwrap();
+        }
+    }
+    if !oils.is_empty() {
+        file.set("oil[1].in_service", "true").unwrap();
+    }
+    for (key, text) in sets {
+        file.set(key, text).unwrap();
+    }
+    let case = file.check().unwrap_or_else(|faults| panic!("{faults}"));
+    advice::advise(&case)
+}
+
+fn plan_of(advice: &Advice, kind: PlanKind, oil: usize) -> &Plan {
+    advice
+        .decision
+        .plans
+        .iter()
+        .find(|plan| plan.kind == kind && plan.oil == oil)
+        .unwrap_or_else(|| panic!("no plan {kind} for oil {oil}"))
+}
+
+fn has_caution(advice: &Advice, id: &str) -> bool {
+    advice.cautions.iter().any(|caution| caution.row.id == id)
+}
+
+fn has_stop(advice: &Advice, id: &str) -> bool {
+    advice.cautions.iter().any(|caution| caution.row.id == id && caution.row.stop)
+}
+
+#[test]
+fn case_2_keeping_and_changing_the_oil_are_both_shown() {
+    let advice = advised("-20 °C", &[HM46, HV32, HV22], &[]);
+    let heat = plan_of(&advice, PlanKind::Heat, 0);
+    assert!(heat.allowed, "{heat:?}");
+    between(advice.decision.oils[0].heating.needed_w, 300.0, 700.0);
+    assert!(plan_of(&advice, PlanKind::ChangeOil, 2).allowed);
+    assert!(!plan_of(&advice, PlanKind::StartCold, 0).allowed);
+    assert_eq!(advice.decision.chosen().unwrap().kind, PlanKind::ChangeOil);
+    let kept = advised("-20 °C", &[HM46, HV32, HV22], &[("duty.prefer", "heater")]);
+    assert_eq!(kept.decision.chosen().unwrap().kind, PlanKind::Heat);
+}
+
+#[test]
+fn case_3_lower_speed_and_the_next_thinner_class_would_help() {
+    for (oil, class) in [(HV22, "HV 22"), (PAO22, "HS 22")] {
+        // Where the inlet governs at start, a lower speed helps.
+        let advice = advised(
+            "-30 °C",
+            &[oil],
+            &[("oil.class", class), ("suction.bore", "38.1 mm"), ("suction.length", "2 m")],
+        );
+        let ids: Vec<&str> = advice.levers.iter().map(|lever| lever.id).collect();
+        assert!(ids.contains(&"start-speed"), "{ids:?}");
+        assert!(ids.contains(&"thinner-class"), "{ids:?}");
+        assert!(ids.contains(&"bigger-bore"), "{ids:?}");
+    }
+}
+
+#[test]
+fn case_4_the_whole_machine_or_another_oil() {
+    let advice = advised("-40 °C", &[HM46, PAO22], &[("reservoir.insulation.thickness", "25 mm")]);
+    assert!(!plan_of(&advice, PlanKind::Heat, 0).allowed);
+    assert!(plan_of(&advice, PlanKind::WholeMachineHeat, 0).allowed);
+    assert_eq!(advice.decision.chosen().unwrap().kind, PlanKind::ChangeAndHeat);
+
+    let fluid = [("oil[1].class", "MIL-PRF-5606"), ("duty.oil_temperature_max", "35 °C")];
+    let listed = advised("-40 °C", &[], &fluid);
+    assert_eq!(listed.decision.chosen().unwrap().kind, PlanKind::StartCold);
+    let classes = advised("-40 °C", &[], &[("duty.oil_temperature_max", "35 °C")]);
+    let chosen = classes.decision.chosen().unwrap();
+    assert!(classes.decision.starts());
+    // A reference fluid is compared, never chosen unless listed.
+    let case = case("-40 °C", &[]);
+    assert!(!case.oils[chosen.oil].reference_only());
+}
+
+#[test]
+fn case_4_a_low_flash_point_is_a_caution_at_a_heater() {
+    let sets = [("oil[1].flash_point", "82 °C"), ("duty.prefer", "heater")];
+    let advice = advised("-34 °C", &[PAO22], &sets);
+    assert!(advice.decision.chosen().unwrap().kind.heats());
+    assert!(has_caution(&advice, "flash-point"));
+    assert!(!has_caution(&advised("-34 °C", &[PAO22], &[]), "flash-point"));
+}
+
+#[test]
+fn case_5_at_minus_50_keep_it_running_or_store_it_warm() {
+    let advice = advised("-50 °C", &[], &[]);
+    let chosen = advice.decision.chosen().unwrap();
+    assert!(!chosen.kind.starts() || chosen.kind.heats(), "{chosen:?}");
+    assert!(!advice.decision.plans.iter().any(|plan| {
+        plan.allowed
+            && matches!(plan.kind, PlanKind::StartCold | PlanKind::ChangeOil)
+            && !case("-50 °C", &[]).oils[plan.oil].reference_only()
+    }));
+    assert!(advice.decision.plans.iter().any(|plan| plan.kind == PlanKind::KeepRunning));
+    assert!(advice.decision.plans.iter().any(|plan| plan.kind == PlanKind::WholeMachineHeat));
+    assert!(has_stop(&advice, "hose-rating") && has_stop(&advice, "lifting-stop"));
+}
+
+#[test]
+fn case_6_a_warm_tank_is_not_a_ready_machine() {
+    let parked = [
+        ("duty.credit_parked_heat", "true"),
+        ("duty.parked_at", "18:00"),
+        ("duty.parked_oil", "50 °C"),
+        ("reservoir.insulation.thickness", "25 mm"),
+    ];
+    let advice = advised("-30 °C", &[HV22], &parked);
+    let plan = advice.decision.chosen().unwrap();
+    assert_eq!(plan.kind, PlanKind::StartWarmTank);
+    let pump = advice
+        .procedure
+        .iter()
+        .find(|step| step.gate.is_some_and(|gate| gate.reading == advice::Reading::PumpBody));
+    assert!(pump.is_some(), "no pump-warming step");
+    assert!(has_caution(&advice, "hot-oil-cold-pump"));
+}
+
+#[test]
+fn case_12_the_lever_moves_the_element() {
+    let advice = advised("-30 °C", &[HV22], &[("element.place", "above-suction")]);
+    assert_eq!(advice.levers[0].id, "element-below", "{:?}", advice.levers[0].text);
+}
+
+#[test]
+fn case_13_a_1500_w_element_on_120_v_15_a() {
+    let sets = [
+        ("supply.voltage", "120 V"),
+        ("supply.current", "15 A"),
+        ("element.power", "1500 W"),
+        ("element.surface", "2400 cm²"),
+    ];
+    let found = found("-30 °C", &[HV22, &sets]);
+    let fitted = found.heating.fitted.unwrap();
+    assert_eq!(fitted.status, HeatingStatus::CircuitTooSmall);
+    assert_ne!(found.heating.heater_w, Some(1500.0));
+}
+
+#[test]
+fn case_14_what_to_ask_any_supplier_for() {
+    let ask = advised("-38 °C", &[], &[]).ask_for;
+    assert!(ask.pour_point_max_c <= -48.0);
+    assert_eq!(ask.at_c, -38.0);
+    assert!(ask.viscosity_max.unwrap() <= 1600.0);
+    assert!(ask.viscosity_min >= 10.0);
+    let grades: Vec<u32> = ask.grades.iter().map(|(grade, _)| *grade).collect();
+    assert_eq!(grades, [15, 22]);
+    assert!(ask.grades[1].1 > 190.0, "VG 22 at best: {:?}", ask.grades);
+    // At -50 °C no ordinary oil can.
+    let none = advised("-50 °C", &[], &[]).ask_for;
+    assert!(none.grades.is_empty() && none.why.is_some(), "{none:?}");
+}
+
+#[test]
+fn case_15_ester_hoses_and_the_hose_stop() {
+    let ester: &[(&str, &str)] = &[
+        ("oil.base", "ester"),
+        ("oil.viscosity.40 °C", "22 mm²/s"),
+        ("oil.viscosity.100 °C", "4.9 mm²/s"),
+        ("oil.pour_point", "-54 °C"),
+    ];
+    assert!(has_caution(&advised("-25 °C", &[ester], &[]), "ester-hoses"));
+    assert!(!has_caution(&advised("-25 °C", &[HV22], &[]), "ester-hoses"));
+    for oil in [ester, HM46, HV22, PAO22] {
+        assert!(has_stop(&advised("-41 °C", &[oil], &[]), "hose-rating"));
+        assert!(!has_caution(&advised("-39 °C", &[oil], &[]), "hose-rating"));
     }
 }

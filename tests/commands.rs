@@ -277,7 +277,7 @@ fn one_oil_over_temperature() {
 fn without_a_command_and_for_help() {
     let output = run(&[]);
     assert_eq!(output.status.code(), Some(2));
-    assert!(text(&output.stderr).contains("try: coldsump assess CASE.toml"));
+    assert!(text(&output.stderr).contains("try: coldsump advise CASE.toml"));
     let output = run(&["--help"]);
     assert_eq!(output.status.code(), Some(0));
     assert!(text(&output.stdout).contains("Exit codes"));
@@ -289,4 +289,109 @@ fn colour_only_where_asked() {
     assert!(!plain.stdout.contains(&0x1b));
     let colored = run(&["assess", LOADER, "--color", "always"]);
     assert!(colored.stdout.contains(&0x1b));
+}
+
+#[test]
+fn advise_in_every_format() {
+    let json = run(&["advise", LOADER, "--format", "json"]);
+    assert_eq!(json.status.code(), Some(0));
+    let value: serde_json::Value = serde_json::from_slice(&json.stdout).unwrap();
+    assert_eq!(value["plans"][value["choice"]["plan"].as_u64().unwrap() as usize]["allowed"], true);
+    // Units are of the screen, not of the contract.
+    let us = run(&["advise", LOADER, "--format", "json", "--units", "us"]);
+    assert_eq!(us.stdout, json.stdout);
+    let out = text(&run(&["advise", LOADER, "--units", "us"]).stdout);
+    assert!(out.contains("-36.4 °F, heater sized for -29.2 °F"), "{out}");
+    let out = text(&run(&["advise", LOADER, "--format", "markdown"]).stdout);
+    assert!(out.starts_with("# Loader 12") && out.contains("\n## Procedure\n"), "{out}");
+    let out = text(&run(&["advise", LOADER, "--ascii"]).stdout);
+    assert!(out.is_ascii(), "{out}");
+    let two =
+        text(&run(&["advise", LOADER, "examples/hollow-skid.toml", "--format", "json"]).stdout);
+    assert_eq!(two.lines().count(), 2);
+}
+
+#[test]
+fn advise_ends_with_3_where_no_plan_starts_the_machine() {
+    let output = run(&["advise", "examples/deep-cold-drill.toml"]);
+    assert_eq!(output.status.code(), Some(3));
+    assert!(text(&output.stdout).contains("Do not switch it off"));
+    let output = run(&["advise", LOADER, "--oil", "oil in service"]);
+    assert_eq!(output.status.code(), Some(3));
+    // Wrong input is graver than no plan; the good case is still answered.
+    let output = run(&["advise", "examples/deep-cold-drill.toml", "README.md"]);
+    assert_eq!(output.status.code(), Some(2));
+    assert!(text(&output.stdout).contains("Far Adit"));
+}
+
+#[test]
+fn advise_for_some_oils_only() {
+    let out = run(&["advise", LOADER, "--oil", "synthetic", "--format", "json"]);
+    let value: serde_json::Value = serde_json::from_slice(&out.stdout).unwrap();
+    assert_eq!(value["oils"].as_array().unwrap().len(), 1);
+    assert_eq!(value["choice"]["oil"], "synthetic");
+    let classes = "examples/north-bench-classes.toml";
+    let out = run(&["advise", classes, "--oil", "HV-22", "--oil", "HS-22", "--format", "json"]);
+    let value: serde_json::Value = serde_json::from_slice(&out.stdout).unwrap();
+    assert_eq!(value["oils"].as_array().unwrap().len(), 2);
+    let out = run(&["advise", LOADER, "--oil", "syntetic"]);
+    assert_eq!(out.status.code(), Some(2));
+    assert_eq!(
+        text(&out.stderr),
+        "examples/skarn-loader.toml: no oil of the name \"syntetic\"\n\ntry: --oil \"oil in service\" or \"winter multigrade\" or \"synthetic\"\n"
+    );
+}
+
+#[test]
+fn advise_writes_a_file_whole_or_not_at_all() {
+    let folder = std::env::temp_dir().join(format!("coldsump-advise-{}", std::process::id()));
+    std::fs::create_dir_all(&folder).unwrap();
+    let path = folder.join("loader.md");
+    let target = path.to_str().unwrap();
+    let output = run(&["advise", LOADER, "--format", "markdown", "-o", target]);
+    assert_eq!(output.status.code(), Some(0));
+    assert!(output.stdout.is_empty());
+    let first = std::fs::read_to_string(&path).unwrap();
+    assert!(first.starts_with("# Loader 12"));
+    let again = run(&["advise", "examples/hollow-skid.toml", "--format", "markdown", "-o", target]);
+    assert_eq!(again.status.code(), Some(1));
+    assert!(
+        text(&again.stderr).contains("is there already\n\ntry: --force"),
+        "{}",
+        text(&again.stderr)
+    );
+    assert_eq!(std::fs::read_to_string(&path).unwrap(), first);
+    let forced = run(&[
+        "advise",
+        "examples/hollow-skid.toml",
+        "--format",
+        "markdown",
+        "-o",
+        target,
+        "--force",
+    ]);
+    assert_eq!(forced.status.code(), Some(0));
+    assert!(std::fs::read_to_string(&path).unwrap().starts_with("# Skid loader 3"));
+    let nowhere = folder.join("missing").join("x.md");
+    let output = run(&["advise", LOADER, "-o", nowhere.to_str().unwrap()]);
+    assert_eq!(output.status.code(), Some(1));
+    assert!(text(&output.stderr).contains("cannot write"));
+    assert_eq!(std::fs::read_dir(&folder).unwrap().count(), 1, "something half-written stayed");
+    std::fs::remove_dir_all(&folder).unwrap();
+}
+
+#[test]
+fn text_of_a_case_brings_no_terminal_escapes() {
+    let case = "format = 1\ntitle = \"a\\u001b[31mb\\u0007\"\nsite.minimum_temperature = \"-9 °C\"\n\
+        pump.kind = \"vane\"\nreservoir.oil_volume = \"90 L\"\nduty.time_to_warm = \"2 h\"\n\
+        oil = [{ name = \"x\\u001b]0;y\\u0007\", class = \"HV 32\" }]\n";
+    for format in ["text", "markdown"] {
+        let folder =
+            std::env::temp_dir().join(format!("coldsump-esc-{format}-{}", std::process::id()));
+        std::fs::write(&folder, case).unwrap();
+        let output = run(&["advise", folder.to_str().unwrap(), "--format", format]);
+        std::fs::remove_file(&folder).unwrap();
+        assert!(!output.stdout.contains(&0x1b) && !output.stdout.contains(&7), "{format}");
+        assert!(text(&output.stdout).contains("31mb"));
+    }
 }

@@ -1,5 +1,6 @@
 //! The third tier: everything a case is advised.
 
+use super::ask_for::{self, AskFor};
 use super::assumptions::{self, Confirm};
 use super::cautions::{self, Caution};
 use super::decide::{Decision, decide};
@@ -13,6 +14,8 @@ use crate::case::Case;
 pub struct Advice {
     /// Every oil, all plans, the choice.
     pub decision: Decision,
+    /// The oil to ask a supplier for.
+    pub ask_for: AskFor,
     /// The steps, in order.
     pub procedure: Vec<Step>,
     /// What can hurt somebody or the machine, gravest first.
@@ -42,12 +45,13 @@ pub struct Advice {
 /// let case = file.check().unwrap();
 /// let advice = advice::advise(&case);
 /// assert!(advice.cautions.iter().any(|caution| caution.row.id == "manual-first"));
-/// assert!(advice.decision.ask_for.pour_point_max_c == -40.0);
+/// assert!(advice.ask_for.pour_point_max_c == -40.0);
 /// ```
 #[must_use]
 pub fn advise(case: &Case) -> Advice {
     let decision = decide(case);
-    let (mut procedure, cautions) = match Scene::new(case, &decision) {
+    let ask_for = ask_for::ask_for(case);
+    let (mut procedure, cautions) = match Scene::new(case, &decision, &ask_for) {
         Some(scene) => (procedure::procedure(&scene), cautions::cautions(&scene)),
         None => (Vec::new(), Vec::new()),
     };
@@ -58,5 +62,5 @@ pub fn advise(case: &Case) -> Advice {
     let confirm = assumptions::confirm(case, &decision);
     let levers = levers::levers(case, &decision);
     let evidence = evidence::evidence(case, &decision);
-    Advice { decision, procedure, cautions, confirm, levers, evidence, record: RECORD }
+    Advice { decision, ask_for, procedure, cautions, confirm, levers, evidence, record: RECORD }
 }

@@ -6,18 +6,19 @@ use crate::case::Case;
 use crate::oil::grade::GRADES;
 use crate::oil::{BandPolicy, ViscosityCurve, viscosity_at_100};
 use crate::pump::Inlet;
+use crate::solve;
 use crate::source::{Method, Source};
 
 /// How the grades and the index are found that can meet a specification.
 pub static ASK_FOR: Method = Method {
     name: "least viscosity index of each grade whose D341 line meets the cold and, sheared, the hot viscosity",
     source: Source::judgement(
-        "ISO 3448 grades at their edges, ASTM D341 and D2270; shear as for the likely range; up to an index of 200",
+        "ISO 3448 grades at their edges, ASTM D341 and D2270; shear as for the likely range; up to an index of 220",
     ),
 };
 
-/// Ordinary hydraulic oils are not sold over this viscosity index.
-const INDEX_MOST: f64 = 200.0;
+/// Hydraulic oils for deep cold reach this viscosity index; over it they are special fluids.
+const INDEX_MOST: f64 = 220.0;
 /// Nor under this one.
 const INDEX_LEAST: f64 = 80.0;
 /// Over this index an oil is taken to hold polymer, which shears.
@@ -72,7 +73,9 @@ pub(super) fn ask_for(case: &Case) -> AskFor {
             .collect()
     });
     let why = if viscosity_max.is_none() {
-        Some("the air pressure or the suction line leaves nothing for any oil: no oil starts it cold")
+        Some(
+            "the air pressure or the suction line leaves nothing for any oil: no oil starts it cold",
+        )
     } else if grades.is_empty() {
         Some("no ordinary oil is thin enough in the cold and thick enough when hot")
     } else {
@@ -109,40 +112,46 @@ const COLD_DENSITY: f64 = 900.0;
 
 /// The least whole viscosity index with which some oil of a grade meets both ends.
 fn least_index(
-    (least, greatest): (f64, f64),
+    edges: (f64, f64),
     cold: (f64, f64),
     hot: (f64, f64),
     policy: &BandPolicy,
 ) -> Option<f64> {
-    let meets = |index: f64| {
-        // The hot end asks for a thick oil of the grade, the cold end for a thin one: try the thinnest
-        // that is thick enough when hot.
-        let at = |kv40: f64| {
-            let kv100 = viscosity_at_100(kv40, index)?;
-            let curve = ViscosityCurve::through(&[(40.0, kv40), (100.0, kv100)]).ok()?;
-            let sheared = curve.at(hot.0) * shear(index, hot.0, policy);
-            Some((sheared - hot.1, cold.1 - curve.at(cold.0)))
-        };
-        let mut kv40 = least;
-        let step = (greatest - least) / 40.0;
-        while kv40 <= greatest + 1e-9 {
-            if let Some((hot_spare, cold_spare)) = at(kv40) {
-                if hot_spare >= 0.0 {
-                    return cold_spare >= 0.0;
-                }
-            }
-            kv40 += step;
-        }
-        false
+    let meets = |index: &f64| meets(*index, edges, cold, hot, policy);
+    let steps = |from: f64, by: f64, to: f64| {
+        std::iter::successors(Some(from), move |at| Some(at + by).filter(|next| *next <= to))
     };
-    let mut index = INDEX_LEAST;
-    while index <= INDEX_MOST {
-        if meets(index) {
-            return Some(index);
-        }
-        index += 1.0;
-    }
-    None
+    let coarse = steps(INDEX_LEAST, COARSE, INDEX_MOST).find(meets)?;
+    steps((coarse - COARSE + 1.0).max(INDEX_LEAST), 1.0, coarse).find(meets)
+}
+
+/// First step of the search for an index.
+const COARSE: f64 = 10.0;
+
+/// Some oil of a grade with this index is thin enough in the cold and thick enough when hot: the
+/// hot end asks for a thick oil of the grade, the cold end for a thin one, so the thinnest that is
+/// thick enough when hot decides.
+fn meets(
+    index: f64,
+    (least, greatest): (f64, f64),
+    cold: (f64, f64),
+    hot: (f64, f64),
+    policy: &BandPolicy,
+) -> bool {
+    let curve = |kv40: f64| {
+        let kv100 = viscosity_at_100(kv40, index)?;
+        ViscosityCurve::through(&[(40.0, kv40), (100.0, kv100)]).ok()
+    };
+    let kept = shear(index, hot.0, policy);
+    let spare = |kv40: f64| curve(kv40).map_or(f64::NAN, |line| line.at(hot.0) * kept - hot.1);
+    let thinnest = if spare(least) >= 0.0 {
+        Some(least)
+    } else if spare(greatest) >= 0.0 {
+        solve::root(spare, least, greatest, 1e-6)
+    } else {
+        None
+    };
+    thinnest.and_then(curve).is_some_and(|line| line.at(cold.0) <= cold.1)
 }
 
 /// Share of its viscosity a used oil keeps at a temperature, as in the likely range.

@@ -66,12 +66,7 @@ fn range(case: &Case, oil: usize, key: &str) -> Option<Range> {
         Some((found.start_floor.at_c, found.work_floor.at_c))
     };
     let (one, other) = (floors(&from)?, floors(&to)?);
-    Some(Range {
-        from,
-        to,
-        start_floor_c: [one.0, other.0],
-        work_floor_c: [one.1, other.1],
-    })
+    Some(Range { from, to, start_floor_c: [one.0, other.0], work_floor_c: [one.1, other.1] })
 }
 
 /// Both ends of the usual range of a key, as a case file has them.

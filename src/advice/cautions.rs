@@ -108,8 +108,7 @@ fn always(_: &Scene<'_>) -> Option<Say> {
 /// The soak is under a temperature.
 fn under(scene: &Scene<'_>, celsius: f64) -> Option<Say> {
     let soak = scene.found.soak_c;
-    (soak < celsius)
-        .then(|| Say::fill("the soak is {soak}", &[("soak", Temperature(soak).into())]))
+    (soak < celsius).then(|| Say::fill("the soak is {soak}", &[("soak", Temperature(soak).into())]))
 }
 
 fn heated(scene: &Scene<'_>) -> Option<Say> {
@@ -147,10 +146,7 @@ pub(super) static TRIGGERS: &[Trigger] = &[
             match scene.case.machine.hose_rating.map(crate::quantity::Temperature::as_celsius) {
                 Some(rating) if rating > soak => say(
                     "the hoses are rated to {rating}, the soak is {soak}",
-                    &[
-                        ("rating", Temperature(rating).into()),
-                        ("soak", Temperature(soak).into()),
-                    ],
+                    &[("rating", Temperature(rating).into()), ("soak", Temperature(soak).into())],
                 ),
                 None if soak < DEEP_COLD_C => say(
                     "the soak is {soak} and no hose rating is given",
@@ -266,15 +262,17 @@ pub(super) static TRIGGERS: &[Trigger] = &[
     Trigger {
         id: "ester-hoses",
         find: |scene| {
-            (is_ester(scene.oil.base()) || scene.oil.base() == Base::Glycol)
-                .then(|| Say::fill("the oil is a {base}", &[("base", scene.oil.base().id().into())]))
+            (is_ester(scene.oil.base()) || scene.oil.base() == Base::Glycol).then(|| {
+                Say::fill("the oil is a {base}", &[("base", scene.oil.base().id().into())])
+            })
         },
     },
     Trigger {
         id: "standing-oils",
         find: |scene| {
-            is_ester(scene.oil.base())
-                .then(|| Say::fill("the oil is a {base}", &[("base", scene.oil.base().id().into())]))
+            is_ester(scene.oil.base()).then(|| {
+                Say::fill("the oil is a {base}", &[("base", scene.oil.base().id().into())])
+            })
         },
     },
     Trigger {

@@ -1,6 +1,5 @@
 //! The second tier: every oil of a case, all plans side by side, and the choice.
 
-use super::ask_for::{self, AskFor};
 use super::assess::{Assessment, Verdict, assess};
 use super::plan::{self, Plan, PlanKind};
 use super::say::{Figure, Reason};
@@ -17,8 +16,6 @@ pub struct Decision {
     pub in_service: Option<usize>,
     /// All plans.
     pub plans: Vec<Plan>,
-    /// The oil to ask a supplier for.
-    pub ask_for: AskFor,
     /// The choice.
     pub choice: Choice,
 }
@@ -83,16 +80,14 @@ impl Decision {
 #[must_use]
 pub fn decide(case: &Case) -> Decision {
     let oils: Vec<Assessment> = case.oils.iter().map(|oil| assess(case, oil)).collect();
-    let in_service = case
-        .oils
-        .iter()
-        .position(Oil::in_service)
-        .or_else(|| (case.oils.len() == 1).then_some(0));
+    let in_service =
+        case.oils.iter().position(Oil::in_service).or_else(|| (case.oils.len() == 1).then_some(0));
     let mut plans: Vec<Plan> = Vec::new();
     for (at, found) in oils.iter().enumerate() {
         plans.extend(plan::plans_of(case, at, found, in_service == Some(at)));
     }
-    let stuck = !plans.iter().any(|plan| plan.allowed && plan.kind.starts() && may_choose(case, plan));
+    let stuck =
+        !plans.iter().any(|plan| plan.allowed && plan.kind.starts() && may_choose(case, plan));
     let reference: Vec<bool> = case.oils.iter().map(Oil::reference_only).collect();
     let focus = in_service.or_else(|| nearest(&oils, &reference));
     if let Some((at, found)) = focus.and_then(|at| oils.get(at).map(|found| (at, found))) {
@@ -103,8 +98,7 @@ pub fn decide(case: &Case) -> Decision {
         }
     }
     let choice = choose(case, &oils, &plans, in_service);
-    let ask_for = ask_for::ask_for(case);
-    Decision { oils, in_service, plans, ask_for, choice }
+    Decision { oils, in_service, plans, choice }
 }
 
 /// Below this soak, °C, warm storage and running on are always shown: standard hose ends here.
@@ -186,12 +180,7 @@ fn rank(case: &Case, oils: &[Assessment], plan: &Plan) -> Option<Rank> {
 const CHANGE_SHARE: f64 = 0.25;
 const CHANGE_KWH: f64 = 1.0;
 
-fn choose(
-    case: &Case,
-    oils: &[Assessment],
-    plans: &[Plan],
-    in_service: Option<usize>,
-) -> Choice {
+fn choose(case: &Case, oils: &[Assessment], plans: &[Plan], in_service: Option<usize>) -> Choice {
     let best = |wanted: &dyn Fn(&Plan) -> bool| {
         plans
             .iter()
@@ -222,10 +211,7 @@ fn choose(
             why.push(Reason::new(
                 "change-saves",
                 "another oil saves {saved} of {spent} a start",
-                &[
-                    ("saved", Figure::Energy(saved).into()),
-                    ("spent", Figure::Energy(spent).into()),
-                ],
+                &[("saved", Figure::Energy(saved).into()), ("spent", Figure::Energy(spent).into())],
             ));
         } else {
             why.push(Reason::new(
@@ -262,10 +248,19 @@ fn because(case: &Case, oils: &[Assessment], plans: &[Plan], at: usize) -> Vec<R
             }
         }
         PlanKind::Heat | PlanKind::ChangeAndHeat | PlanKind::BlanketAndHold => {
+            let colder =
+                plans.iter().filter_map(|plan| rank(case, oils, plan)).any(|rank| rank.group == 1);
+            if !colder {
+                why.push(Reason::new(
+                    "none-starts-cold",
+                    "none of the oils starts cold with {in_hand} in hand",
+                    &[("in_hand", Figure::Difference(case.policy.limits.in_hand_k).into())],
+                ));
+            }
             if let Some(energy) = plan.energy_kwh {
                 why.push(Reason::new(
                     "heated",
-                    "no allowed oil starts cold with enough in hand, or none that pays for a change; this takes {energy} a start",
+                    "heating takes {energy} a start",
                     &[("energy", Figure::Energy(energy).into())],
                 ));
             }
@@ -280,7 +275,7 @@ fn because(case: &Case, oils: &[Assessment], plans: &[Plan], at: usize) -> Vec<R
         }),
     }
     let low = found.low_at_max;
-    if low < hot_wish(case.pump.kind) {
+    if plan.kind.starts() && low < hot_wish(case.pump.kind) {
         why.push(Reason::new(
             "thin-at-hottest",
             "at {max} it may thin to {low}; no oil that starts this way keeps {wish}",

@@ -98,7 +98,12 @@ fn one(case: &Case, oil: &Oil, found: &Assessment, desk: &mut Desk) {
     }
     for (row, limit) in found.limits.iter().enumerate() {
         if let Some(t) = limit.outcome.temperature() {
-            desk.put(&format!("limits/{row}/temperature_c"), true, method_of(limit.id), reach_at(t));
+            desk.put(
+                &format!("limits/{row}/temperature_c"),
+                true,
+                method_of(limit.id),
+                reach_at(t),
+            );
         }
     }
     for (row, reason) in found.reasons.iter().enumerate() {

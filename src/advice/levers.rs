@@ -71,7 +71,15 @@ pub(super) fn levers(case: &Case, decision: &Decision) -> Vec<Lever> {
             let to = one.oil.unwrap_or(at);
             let gain = gain(found, after.oils.get(to)?)?;
             let oil_name = edited.oils.get(to)?.name().to_owned();
-            Some(Lever { id: one.id, edits: one.edits, oil: to, oil_name, text: one.text, after, gain })
+            Some(Lever {
+                id: one.id,
+                edits: one.edits,
+                oil: to,
+                oil_name,
+                text: one.text,
+                after,
+                gain,
+            })
         })
         .collect();
     levers.sort_by(|a, b| b.gain.total_cmp(&a.gain));
@@ -199,8 +207,11 @@ fn thinner(class: &str) -> Option<&'static Class> {
     let split = |text: &str| -> Option<(String, u32)> {
         let letters: String =
             text.chars().take_while(|c| c.is_alphabetic()).flat_map(char::to_uppercase).collect();
-        let digits: String =
-            text.chars().skip_while(|c| !c.is_ascii_digit()).take_while(char::is_ascii_digit).collect();
+        let digits: String = text
+            .chars()
+            .skip_while(|c| !c.is_ascii_digit())
+            .take_while(char::is_ascii_digit)
+            .collect();
         Some((letters, digits.parse().ok()?))
     };
     let (letters, grade) = split(class)?;
@@ -222,10 +233,7 @@ fn of_inlet(case: &Case, tries: &mut Vec<Try>) {
             "start-speed",
             &[("pump.start_speed", &format!("{} rpm", shown(slower)))],
             "start at {slower} instead of {speed}, where the engine allows it",
-            &[
-                ("slower", Figure::Speed(slower).into()),
-                ("speed", Figure::Speed(speed).into()),
-            ],
+            &[("slower", Figure::Speed(slower).into()), ("speed", Figure::Speed(speed).into())],
         );
     }
     if let Some(line) = &case.suction {
@@ -236,10 +244,7 @@ fn of_inlet(case: &Case, tries: &mut Vec<Try>) {
                 "bigger-bore",
                 &[("suction.bore", &format!("{} mm", shown(*next)))],
                 "a suction line of {next} bore instead of {bore}",
-                &[
-                    ("next", Figure::Length(*next).into()),
-                    ("bore", Figure::Length(bore).into()),
-                ],
+                &[("next", Figure::Length(*next).into()), ("bore", Figure::Length(bore).into())],
             );
         }
         if line.has_strainer() {
@@ -371,10 +376,7 @@ fn of_supply(case: &Case, tries: &mut Vec<Try>) {
             "larger-circuit",
             &[("supply.current", &format!("{} A", shown(*next)))],
             "a circuit of {next} instead of {now}",
-            &[
-                ("next", Figure::Current(*next).into()),
-                ("now", Figure::Current(amperes).into()),
-            ],
+            &[("next", Figure::Current(*next).into()), ("now", Figure::Current(amperes).into())],
         );
     }
     if supply.other_load.as_watts() > 0.0 {

@@ -28,14 +28,14 @@ impl PlanKind {
     #[must_use]
     pub const fn words(self) -> &'static str {
         match self {
-            Self::StartCold => "start it cold",
-            Self::StartWarmTank => "start on the warmth left in the tank",
-            Self::ChangeOil => "change the oil, start cold",
-            Self::Heat => "heat the tank",
-            Self::BlanketAndHold => "cover the tank and hold it warm",
-            Self::ChangeAndHeat => "change the oil and heat the tank",
-            Self::WholeMachineHeat => "warm the whole machine",
-            Self::KeepRunning => "do not switch it off",
+            Self::StartCold => "start cold",
+            Self::StartWarmTank => "start, tank warm",
+            Self::ChangeOil => "change oil",
+            Self::Heat => "heat tank",
+            Self::BlanketAndHold => "cover and hold",
+            Self::ChangeAndHeat => "change oil, heat",
+            Self::WholeMachineHeat => "warm it all",
+            Self::KeepRunning => "keep running",
         }
     }
 
@@ -82,12 +82,7 @@ pub static HOLD: Method = Method {
 };
 
 /// All plans of one oil. `kept`: it is the oil in the machine.
-pub(super) fn plans_of(
-    case: &Case,
-    at: usize,
-    found: &Assessment,
-    kept: bool,
-) -> Vec<Plan> {
+pub(super) fn plans_of(case: &Case, at: usize, found: &Assessment, kept: bool) -> Vec<Plan> {
     let mut plans = vec![start(case, at, found, kept)];
     let suited = found.verdict != Verdict::NotSuited;
     if found.reasons.iter().any(|reason| reason.id == "pump-cold") {
@@ -126,10 +121,9 @@ fn forbidding(found: &Assessment) -> impl Iterator<Item = &Reason> {
 
 fn start(case: &Case, at: usize, found: &Assessment, kept: bool) -> Plan {
     let mut plan = plan(if kept { PlanKind::StartCold } else { PlanKind::ChangeOil }, at);
-    plan.energy_kwh = Some(0.0);
-    plan.ready_s = Some(0.0);
-    plan.allowed =
-        matches!(found.verdict, Verdict::StartsCold | Verdict::StartsColdInletUnproven);
+    plan.allowed = matches!(found.verdict, Verdict::StartsCold | Verdict::StartsColdInletUnproven);
+    plan.energy_kwh = plan.allowed.then_some(0.0);
+    plan.ready_s = plan.energy_kwh;
     plan.why.extend(forbidding(found).cloned());
     if let Some(floor) = found.start_floor.at_c.filter(|floor| found.soak_c < *floor) {
         plan.why.push(Reason::new(
@@ -162,13 +156,13 @@ fn start(case: &Case, at: usize, found: &Assessment, kept: bool) -> Plan {
 /// The tank kept its warmth of the day, the pump did not.
 fn start_warm(case: &Case, at: usize, found: &Assessment, suited: bool) -> Plan {
     let mut plan = plan(PlanKind::StartWarmTank, at);
-    plan.energy_kwh = Some(0.0);
-    plan.ready_s = Some(0.0);
     // The gate is what the tank must be over, as for a heated one.
     let gate = found.start_floor.at_c.map(|floor| floor + case.policy.heat.gate_margin_k);
     plan.allowed = suited
         && found.verdict == Verdict::NeedsHeat
         && gate.is_some_and(|gate| found.tank_soak_c >= gate);
+    plan.energy_kwh = plan.allowed.then_some(0.0);
+    plan.ready_s = plan.energy_kwh;
     plan.why.push(Reason::new(
         "pump-cold",
         "the tank holds {tank}, but pump and hoses are at {soak}: clear the hose and warm the pump first",
@@ -190,7 +184,8 @@ fn heat_tank(at: usize, found: &Assessment, kept: bool, suited: bool) -> Plan {
     plan.energy_kwh = heating.energy_kwh;
     plan.ready_s = heating.time_s;
     plan.why.extend(forbidding(found).cloned());
-    plan.why.extend(heating.whys.iter().map(|why| Reason { id: why.id(), text: why.text().into() }));
+    plan.why
+        .extend(heating.whys.iter().map(|why| Reason { id: why.id(), text: why.text().into() }));
     if plan.allowed && heating.tight {
         plan.why.push(Reason {
             id: "tight",

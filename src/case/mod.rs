@@ -20,7 +20,7 @@ pub use clock::Clock;
 pub use fault::{Fault, Faults, Place};
 pub use file::CaseFile;
 pub use model::{
-    Assumption, Case, CaseDrain, Circuit, Cooldown, Duty, Edit, Element, FluidKind, From, Input, Machine,
-    MinimumHow, Prefer, Pump, Reservoir, Site, Supply, Units,
+    Assumption, Case, CaseDrain, Circuit, Cooldown, Duty, Edit, Element, FluidKind, From, Input,
+    Machine, MinimumHow, Prefer, Pump, Reservoir, Site, Supply, Units,
 };
 pub use policy::{LimitPolicy, Policy, PolicyRow, ROWS as POLICY};

@@ -92,7 +92,7 @@ pub(crate) fn case(path: &Path, sets: &[String], oils: &[String]) -> Result<Case
     let names: Vec<&str> = case.oils.iter().map(coldsump::oil::Oil::name).collect();
     if let Some(missing) = oils.iter().find(|oil| !names.contains(&oil.as_str())) {
         return Err(Trouble::Wrong(format!(
-            "{}: no oil of the name {missing:?}\n\ntry: --oil {:?}",
+            "{}: no oil of the name {missing:?}\n\ntry: --oil \"{}\"",
             path.display(),
             names.join("\" or \"")
         )));

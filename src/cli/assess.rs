@@ -33,7 +33,7 @@ pub(crate) fn run(args: &AssessArgs, look: &LookArgs) -> Result<u8> {
         if oils.is_empty() {
             let names: Vec<&str> = case.oils.iter().map(coldsump::oil::Oil::name).collect();
             eprintln!(
-                "{}: no oil of that name\n\ntry: --oil {:?}",
+                "{}: no oil of that name\n\ntry: --oil \"{}\"",
                 path.display(),
                 names.join("\" or \"")
             );

@@ -11,6 +11,8 @@ use crate::oil::Oil;
 
 /// Levers shown on screen; all are in the JSON.
 const LEVERS_SHOWN: usize = 5;
+/// Pour points this low are those of synthetic or specially dewaxed oils, °C; common practice.
+const LOW_POUR_C: f64 = -40.0;
 /// Plans shown on screen besides those of the oil in service and the allowed ones.
 const PLANS_SHOWN: usize = 12;
 
@@ -131,8 +133,8 @@ impl Page<'_> {
 
     fn site(&self) -> (String, Line) {
         let site = &self.case.site;
-        let mut line =
-            Line::new().figure(self.shown.temperature(site.minimum.as_celsius()), "/site/minimum_c");
+        let mut line = Line::new()
+            .figure(self.shown.temperature(site.minimum.as_celsius()), "/site/minimum_c");
         if site.heating != site.minimum {
             line = line
                 .words(", heater sized for ")
@@ -176,7 +178,8 @@ impl Page<'_> {
             if let Some(kwh) = plan.energy_kwh {
                 line = line.words(", ").figure(energy(kwh), format!("{base}/energy_kwh"));
             }
-            if let Some(amperes) = found.heating.current_a.filter(|_| plan.kind != PlanKind::BlanketAndHold)
+            if let Some(amperes) =
+                found.heating.current_a.filter(|_| plan.kind != PlanKind::BlanketAndHold)
             {
                 line = line
                     .words(", ")
@@ -193,7 +196,9 @@ impl Page<'_> {
             let mut line =
                 Line::new().figure(clock.to_string(), "/choice/switch_on/clock").words(day);
             line = line.words(format!(", for the shift at {}", self.case.duty.shift_start));
-            if let Some(valid) = found.heating.gate_valid_s.filter(|_| plan.kind != PlanKind::BlanketAndHold) {
+            if let Some(valid) =
+                found.heating.gate_valid_s.filter(|_| plan.kind != PlanKind::BlanketAndHold)
+            {
                 line = line
                     .words("; start within ")
                     .figure(self.shown.time(valid), format!("{oil}/gate_valid_s"))
@@ -210,9 +215,7 @@ impl Page<'_> {
             .why
             .iter()
             .enumerate()
-            .map(|(row, why)| {
-                Line::new().say(&why.text, &format!("/choice/why/{row}"), self.shown)
-            })
+            .map(|(row, why)| Line::new().say(&why.text, &format!("/choice/why/{row}"), self.shown))
             .collect();
         if let Some((at, _, found)) = self.focus() {
             lines.extend(found.reasons.iter().enumerate().map(|(row, reason)| {
@@ -252,15 +255,18 @@ impl Page<'_> {
     fn oil_row(&self, at: usize, oil: &Oil, found: &Assessment) -> Vec<Line> {
         let base = format!("/oils/{at}");
         let mut name = oil.name().to_owned();
-        if self.advice.decision.in_service == Some(at) {
-            name.push_str(" *");
+        if self.advice.decision.in_service == Some(at) && !name.contains("in service") {
+            name.push_str(" (now)");
         }
         if oil.reference_only() {
             name.push_str(" (compare)");
         }
         let viscosity = match (found.at_soak.expected, found.at_soak.high) {
             (Some(expected), Some(high)) => Line::new()
-                .figure(number(self.shown, expected), format!("{base}/viscosity_at_soak/expected_mm2_s"))
+                .figure(
+                    number(self.shown, expected),
+                    format!("{base}/viscosity_at_soak/expected_mm2_s"),
+                )
                 .words(" to ")
                 .figure(number(self.shown, high), format!("{base}/viscosity_at_soak/high_mm2_s")),
             _ => Line::from("sets"),
@@ -354,7 +360,7 @@ impl Page<'_> {
     }
 
     fn ask_for(&self, blocks: &mut Vec<Block>) {
-        let ask = &self.advice.decision.ask_for;
+        let ask = &self.advice.ask_for;
         blocks.push(Block::Heading(Line::from("The oil to ask any supplier for")));
         let mut line = Line::from("To start this machine cold here: pour point ")
             .figure(self.shown.temperature(ask.pour_point_max_c), "/ask_for/pour_point_max_c")
@@ -387,7 +393,12 @@ impl Page<'_> {
                     .figure(fixed(*index, 0), format!("/ask_for/grades/{row}/viscosity_index_min"))
                     .words(" or more");
             }
-            line = line.words(". Ask for the cold viscosity measured (ASTM D2983 or D445), not calculated.");
+            if ask.pour_point_max_c <= LOW_POUR_C {
+                line = line.words(": synthetic or low-pour oils");
+            }
+            line = line.words(
+                ". Ask for the cold viscosity measured (ASTM D2983 or D445), not calculated.",
+            );
         }
         blocks.push(Block::Text(line));
     }
@@ -446,18 +457,18 @@ impl Page<'_> {
             Bound::AtLeastC(v) => line
                 .figure(self.shown.temperature(v), format!("{base}/at_least_c"))
                 .words(" or warmer"),
-            Bound::AtMostK(v) => line
-                .words("at most ")
-                .figure(self.shown.difference(v), format!("{base}/at_most_k")),
-            Bound::AtMostKpa(v) => line
-                .words("at most ")
-                .figure(self.shown.vacuum(v), format!("{base}/at_most_kpa")),
+            Bound::AtMostK(v) => {
+                line.words("at most ").figure(self.shown.difference(v), format!("{base}/at_most_k"))
+            }
+            Bound::AtMostKpa(v) => {
+                line.words("at most ").figure(self.shown.vacuum(v), format!("{base}/at_most_kpa"))
+            }
             Bound::AtMostRpm(v) => line
                 .words("at most ")
                 .figure(format!("{} rpm", fixed(v, 0)), format!("{base}/at_most_rpm")),
-            Bound::AtLeastS(v) => line
-                .words("at least ")
-                .figure(self.shown.time(v), format!("{base}/at_least_s")),
+            Bound::AtLeastS(v) => {
+                line.words("at least ").figure(self.shown.time(v), format!("{base}/at_least_s"))
+            }
         }
     }
 
@@ -492,20 +503,16 @@ impl Page<'_> {
     fn assumed(&self, at: usize, confirm: &Confirm) -> Line {
         let one = &confirm.assumption;
         let base = format!("/assumptions/{at}");
-        let mut line = Line::from(format!("{}: ", one.key))
-            .figure(one.value.clone(), format!("{base}/value"));
+        let mut line =
+            Line::from(format!("{}: ", one.key)).figure(one.value.clone(), format!("{base}/value"));
         if confirm.governs {
             line = line.strong(", a floor hangs on it");
         }
         if let Some(range) = &confirm.range {
-            line = line
-                .words(" (start from ")
-                .words(String::new());
+            line = line.words(" (start from ").words(String::new());
             let end = |line: Line, t: Option<f64>, key: &str| match t {
-                Some(t) => line.figure(
-                    self.shown.temperature(t),
-                    format!("{base}/range/start_floor/{key}"),
-                ),
+                Some(t) => line
+                    .figure(self.shown.temperature(t), format!("{base}/range/start_floor/{key}")),
                 None => line.words("never"),
             };
             line = end(line, range.start_floor_c[0], "from_c").words(" with ");
@@ -513,7 +520,8 @@ impl Page<'_> {
             line = end(line, range.start_floor_c[1], "to_c").words(" with ");
             line = line.figure(range.to.clone(), format!("{base}/range/to")).words(")");
         }
-        let find = if one.ask.is_empty() { String::new() } else { format!("; find it: {}", one.ask) };
+        let find =
+            if one.ask.is_empty() { String::new() } else { format!("; find it: {}", one.ask) };
         line.faint(format!(" [{}{find}]", one.source))
     }
 
@@ -551,9 +559,17 @@ impl Page<'_> {
             None => line.words("never"),
         };
         line = match (found.heating.status, found.heating.heater_w) {
-            (HeatingStatus::Sized, Some(watts)) => line
-                .words(", heater ")
-                .figure(self.shown.power(watts), format!("{base}/heater_w")),
+            (HeatingStatus::Sized, Some(watts)) => {
+                let line = line
+                    .words(", heater ")
+                    .figure(self.shown.power(watts), format!("{base}/heater_w"));
+                match found.heating.needed_w {
+                    Some(needed) => line
+                        .words(" for ")
+                        .figure(self.shown.power(needed), format!("{base}/needed_w")),
+                    None => line,
+                }
+            }
             (HeatingStatus::NotNeeded, _) => line.words(", no heater"),
             _ => line.words(", no heater does it"),
         };
@@ -638,9 +654,9 @@ fn capital(text: &str) -> String {
 const fn verdict_words(verdict: Verdict) -> &'static str {
     match verdict {
         Verdict::StartsCold => "starts cold",
-        Verdict::StartsColdInletUnproven => "starts, inlet unproven",
-        Verdict::NeedsHeat => "heat the tank",
-        Verdict::NeedsWholeMachineHeat => "heat the whole machine",
+        Verdict::StartsColdInletUnproven => "inlet unproven",
+        Verdict::NeedsHeat => "heat tank",
+        Verdict::NeedsWholeMachineHeat => "warm it all",
         Verdict::NotSuited => "not suited",
     }
 }

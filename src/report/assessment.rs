@@ -135,9 +135,11 @@ fn one_oil(
             })
         })
         .collect();
-    notes.extend(found.reasons.iter().enumerate().map(|(row, reason)| {
-        Line::new().say(&reason.text, &format!("{at}/reasons/{row}"), shown)
-    }));
+    notes.extend(
+        found.reasons.iter().enumerate().map(|(row, reason)| {
+            Line::new().say(&reason.text, &format!("{at}/reasons/{row}"), shown)
+        }),
+    );
     if !notes.is_empty() {
         blocks.push(Block::List(notes));
     }

@@ -97,7 +97,11 @@ impl Line {
     /// Adds a figure with the pointer of its JSON value.
     #[must_use]
     pub fn figure(mut self, text: impl Into<String>, pointer: impl Into<String>) -> Self {
-        self.0.push(Span { text: clean(text.into()), pointer: Some(pointer.into()), tone: Tone::Plain });
+        self.0.push(Span {
+            text: clean(text.into()),
+            pointer: Some(pointer.into()),
+            tone: Tone::Plain,
+        });
         self
     }
 
@@ -141,7 +145,9 @@ impl Document {
 }
 
 impl Block {
-    fn lines(&self) -> Vec<&Line> {
+    /// Its lines, in reading order.
+    #[must_use]
+    pub fn lines(&self) -> Vec<&Line> {
         match self {
             Self::Title(line) | Self::Heading(line) | Self::Subheading(line) | Self::Text(line) => {
                 vec![line]

@@ -179,37 +179,47 @@ fn push_wrapped_from(
     indent: usize,
     strong: bool,
 ) {
-    let mut first = true;
-    let mut glue = false;
-    for Span { text, tone, .. } in &line.0 {
-        let tone = if strong { Tone::Strong } else { *tone };
-        let room = look.width.saturating_sub(indent).max(1);
-        let words: Vec<String> = text.split(' ').flat_map(|word| pieces(word, room)).collect();
-        let mut words = words.iter().map(String::as_str).peekable();
-        let mut leading = true;
-        while let Some(word) = words.next() {
-            let spaced = !leading || !glue;
-            leading = false;
-            if word.is_empty() {
-                glue = false;
-                continue;
-            }
-            let space = usize::from(spaced && !first);
-            if column + space + word.width() > look.width && column > indent && space == 1 {
-                out.push('\n');
-                out.push_str(&" ".repeat(indent));
-                column = indent;
-            } else if space == 1 {
-                out.push(' ');
-                column += 1;
-            }
-            out.push_str(&styled(word, tone, look));
-            column += word.width();
-            first = false;
-            glue = words.peek().is_none();
+    let room = look.width.saturating_sub(indent).max(1);
+    for (at, word) in words_of(line, room).iter().enumerate() {
+        let width: usize = word.iter().map(|(text, _)| text.width()).sum();
+        if at > 0 && column + 1 + width > look.width && column > indent {
+            out.push('\n');
+            out.push_str(&" ".repeat(indent));
+            column = indent;
+        } else if at > 0 {
+            out.push(' ');
+            column += 1;
         }
+        for (text, tone) in word {
+            out.push_str(&styled(text, if strong { Tone::Strong } else { *tone }, look));
+        }
+        column += width;
     }
     out.push('\n');
+}
+
+/// The words of a line; a word may run over spans, and then has more than one tone.
+fn words_of(line: &Line, room: usize) -> Vec<Vec<(String, Tone)>> {
+    let mut words: Vec<Vec<(String, Tone)>> = Vec::new();
+    let mut open = false;
+    for Span { text, tone, .. } in &line.0 {
+        for (at, piece) in text.split(' ').enumerate() {
+            if at > 0 {
+                open = false;
+            }
+            for (cut, part) in pieces(piece, room).into_iter().enumerate() {
+                if part.is_empty() {
+                    continue;
+                }
+                match words.last_mut() {
+                    Some(word) if open && cut == 0 => word.push((part, *tone)),
+                    _ => words.push(vec![(part, *tone)]),
+                }
+                open = true;
+            }
+        }
+    }
+    words
 }
 
 fn styled(text: &str, tone: Tone, look: Look) -> String {

@@ -51,9 +51,9 @@ impl Shown {
     #[must_use]
     pub fn length(self, mm: f64) -> String {
         if self.us() {
-            format!("{} in", two_figures(mm / 25.4))
+            format!("{} in", trimmed(mm / 25.4, 2))
         } else {
-            format!("{} mm", two_figures(mm))
+            format!("{} mm", trimmed(mm, 1))
         }
     }
 
@@ -87,9 +87,12 @@ impl Shown {
         }
     }
 
-    /// A viscosity in mm²/s, to two figures: more is not known.
+    /// A viscosity in mm²/s, to two figures: more is not known; at the hot end to a tenth.
     #[must_use]
     pub fn viscosity(self, mm2_s: f64) -> String {
+        if mm2_s < 20.0 {
+            return format!("{} mm²/s", trimmed(mm2_s, 1));
+        }
         format!("{} mm²/s", two_figures(mm2_s))
     }
 
@@ -99,11 +102,13 @@ impl Shown {
         format!("{} W", fixed(watts, 0))
     }
 
-    /// A pressure in kPa; inHg beside it where a gauge at the machine reads it.
+    /// A pressure in kPa, in bar where it is a system pressure.
     #[must_use]
     pub fn pressure(self, kpa: f64) -> String {
         if self.us() {
             format!("{} psi", fixed(kpa / 6.894_757, 1))
+        } else if kpa >= 1000.0 {
+            format!("{} bar", trimmed(kpa / 100.0, 1))
         } else {
             format!("{} kPa", fixed(kpa, 1))
         }
@@ -168,6 +173,17 @@ impl Shown {
         } else {
             format!("{} m/s", fixed(m_s, 1))
         }
+    }
+}
+
+/// A number with so many decimals at most.
+#[must_use]
+pub(super) fn trimmed(value: f64, decimals: usize) -> String {
+    let text = fixed(value, decimals);
+    if text.contains('.') {
+        text.trim_end_matches('0').trim_end_matches('.').to_owned()
+    } else {
+        text
     }
 }
 

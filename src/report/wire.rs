@@ -2,8 +2,8 @@
 
 use super::units::Shown;
 use crate::advice::{
-    Advice, AskFor, Assessment, Bound, Choice, Confirm, Fitted, Heating, Lever, LimitResult, Outcome,
-    Plan, Reason, Say, Step,
+    Advice, AskFor, Assessment, Bound, Choice, Confirm, Fitted, Heating, Lever, LimitResult,
+    Outcome, Plan, Reason, Say, Step,
 };
 use crate::case::{Assumption, Case, From, MinimumHow, Units};
 use crate::oil::{Oil, reported};
@@ -79,7 +79,7 @@ pub fn advice_json(case: &Case, advice: &Advice) -> Value {
     let mut put = |key: &str, value: Value| map.insert(key.to_owned(), value);
     put("oils", case.oils.iter().zip(&decision.oils).map(|(oil, f)| oil_json(oil, f)).collect());
     put("plans", decision.plans.iter().map(plan_json).collect());
-    put("ask_for", ask_for_json(&decision.ask_for));
+    put("ask_for", ask_for_json(&advice.ask_for));
     put("choice", choice_json(case, advice, &decision.choice));
     put(
         "procedure",
@@ -185,9 +185,7 @@ fn assumption_json(assumption: &Assumption, governs: bool) -> Value {
 fn confirm_json(confirm: &Confirm) -> Value {
     let mut value = assumption_json(&confirm.assumption, confirm.governs);
     if let (Some(range), Value::Object(map)) = (&confirm.range, &mut value) {
-        let ends = |floors: [Option<f64>; 2]| {
-            json!({ "from_c": floors[0], "to_c": floors[1] })
-        };
+        let ends = |floors: [Option<f64>; 2]| json!({ "from_c": floors[0], "to_c": floors[1] });
         map.insert(
             "range".to_owned(),
             json!({

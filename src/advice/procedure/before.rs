@@ -20,7 +20,7 @@ pub(super) fn season(scene: &Scene<'_>) -> Vec<Step> {
     hoses(scene, &mut steps);
     oil(scene, &mut steps);
     steps.push(step(
-        "Fit a vacuum gauge that reads to {vacuum} on a tee at the pump's suction port, and a probe in the oil at the suction fitting that reads down to {soak} or colder. A dial that ends at 0 °C or -5 °C is no use here.",
+        "Fit a vacuum gauge that reads to {vacuum} on a tee at the pump's suction port, and a probe in the oil at the tank's suction fitting that reads down to {soak} or colder. A dial that ends at 0 °C or -5 °C is no use here.",
         &[
             ("vacuum", Vacuum((scene.vacuum_limit_kpa() * 1.5).max(30.0)).into()),
             ("soak", soak.into()),
@@ -81,10 +81,7 @@ fn hoses(scene: &Scene<'_>, steps: &mut Vec<Step>) {
         None if soak < DEEP_COLD_C => Step::new(
             Phase::Season,
             "STOP: ordinary hydraulic hose ends at {ordinary}, the soak is {soak}. Find the rating of every hose, the suction hose first, and fit hoses rated to {soak} or colder.",
-            &[
-                ("ordinary", Temperature(DEEP_COLD_C).into()),
-                ("soak", Temperature(soak).into()),
-            ],
+            &[("ordinary", Temperature(DEEP_COLD_C).into()), ("soak", Temperature(soak).into())],
         ),
         Some(rating) => {
             steps.push(Step::new(
@@ -112,7 +109,7 @@ fn oil(scene: &Scene<'_>, steps: &mut Vec<Step>) {
         Some(class) if class != oil.name() => format!("{} ({class})", oil.name()),
         _ => oil.name().to_owned(),
     };
-    let asked = &scene.decision.ask_for;
+    let asked = scene.ask_for;
     if scene.changed() {
         let cold = scene.found.at_soak.high;
         let template = match (oil.class_only(), cold) {
@@ -143,8 +140,19 @@ fn oil(scene: &Scene<'_>, steps: &mut Vec<Step>) {
                     ),
                 ],
             )
-            .mind(&["mixing-oils", "seal-compatibility", "ester-hoses", "hot-oil-burns"]),
+            .mind(&[
+                "mixing-oils",
+                "seal-compatibility",
+                "ester-hoses",
+                "hot-oil-burns",
+            ]),
         );
+    } else if scene.decision.in_service.is_none() {
+        steps.push(Step::new(
+            Phase::Season,
+            "What oil is in the machine is not given. The figures here are for {oil}, which comes nearest: find out what is in it and work this case out again.",
+            &[("oil", name.into())],
+        ));
     } else {
         let mut template = "Keep {oil}. Draw a sample from the tank sump: it must be clear, without water, and the oil that the label says.".to_owned();
         if found.at_soak.reach != crate::oil::Reach::BetweenPoints {
@@ -169,7 +177,9 @@ fn heater(scene: &Scene<'_>, steps: &mut Vec<Step>) {
         (format!("Use the heater that is fitted, {what}."), &["element-covered", "ground-fault"])
     } else if element.kind == ElementKind::Pad {
         (
-            format!("Have a licensed electrician fit a pad of {what} to the clean flat outside of the tank, at most {{density}}."),
+            format!(
+                "Have a licensed electrician fit a pad of {what} to the clean flat outside of the tank, at most {{density}}."
+            ),
             &["ground-fault", "unattended-heating"],
         )
     } else {
@@ -220,7 +230,7 @@ pub(super) fn evening(scene: &Scene<'_>) -> Vec<Step> {
         )
         .mind(&["stored-energy", "towing"]),
     ];
-    if scene.warm_tank() || scene.is(&[PlanKind::KeepRunning]) {
+    if scene.warm_tank() {
         steps.push(step("Close panels and put the cover on while the tank is still warm.", &[]));
     }
     if let Some(plan) = scene.plan.filter(|plan| plan.kind.heats()) {
@@ -244,13 +254,14 @@ pub(super) fn evening(scene: &Scene<'_>) -> Vec<Step> {
         } else {
             "Set the thermostat to {thermostat}, check the oil level over the element, plug in and set the timer: heater ({watts}) on at {clock} {day}, for a start at {start}. It takes {ready}."
         };
-        steps.push(
-            step(template, &fills)
-                .expect(plan.ready_s.filter(|time| *time > 0.0))
-                .mind(&["element-covered", "cords", "unattended-heating", "ground-fault"]),
-        );
+        steps.push(step(template, &fills).expect(plan.ready_s.filter(|time| *time > 0.0)).mind(&[
+            "element-covered",
+            "cords",
+            "unattended-heating",
+            "ground-fault",
+        ]));
     }
-    if scene.is(&[PlanKind::KeepRunning]) {
+    if scene.keeps_running() {
         if let Some(gate) = scene.gate_c() {
             steps.push(
                 step(
@@ -272,9 +283,11 @@ pub(super) fn evening(scene: &Scene<'_>) -> Vec<Step> {
             );
         }
     }
-    steps.push(step(
-        "Fill a clear jar with oil from the tank sump, close it, and leave it outside next to the machine overnight.",
-        &[],
-    ));
+    if !scene.keeps_running() {
+        steps.push(step(
+            "Fill a clear jar with oil from the tank sump, close it, and leave it outside next to the machine overnight.",
+            &[],
+        ));
+    }
     steps
 }

@@ -9,6 +9,7 @@ mod morning;
 
 pub(super) use after::RECORD;
 
+use super::ask_for::AskFor;
 use super::assess::Assessment;
 use super::decide::Decision;
 use super::limits::Edge;
@@ -143,6 +144,7 @@ impl Step {
 pub(super) struct Scene<'a> {
     pub(super) case: &'a Case,
     pub(super) decision: &'a Decision,
+    pub(super) ask_for: &'a AskFor,
     pub(super) plan: Option<&'a Plan>,
     pub(super) oil: &'a Oil,
     pub(super) found: &'a Assessment,
@@ -151,12 +153,13 @@ pub(super) struct Scene<'a> {
 
 impl<'a> Scene<'a> {
     /// The scene of a decision; `None` where a case has no oils.
-    pub(super) fn new(case: &'a Case, decision: &'a Decision) -> Option<Self> {
+    pub(super) fn new(case: &'a Case, decision: &'a Decision, ask_for: &'a AskFor) -> Option<Self> {
         let at = decision.focus().unwrap_or(0);
         let oil = case.oils.get(at)?;
         Some(Self {
             case,
             decision,
+            ask_for,
             plan: decision.chosen(),
             oil,
             found: decision.oils.get(at)?,
@@ -178,9 +181,15 @@ impl<'a> Scene<'a> {
         self.heated() || self.is(&[PlanKind::StartWarmTank])
     }
 
-    /// The oil is another than the one in the machine.
+    /// The plan puts another oil into the machine.
     pub(super) fn changed(&self) -> bool {
-        self.plan.is_some_and(|plan| Some(plan.oil) != self.decision.in_service)
+        self.plan
+            .is_some_and(|plan| plan.kind.starts() && Some(plan.oil) != self.decision.in_service)
+    }
+
+    /// The machine never stops, so nothing of it soaks through.
+    pub(super) fn keeps_running(&self) -> bool {
+        self.is(&[PlanKind::KeepRunning])
     }
 
     /// Oil at the suction before the pump may be turned, °C: the start floor and the margin of the
@@ -245,7 +254,9 @@ pub(super) fn procedure(scene: &Scene<'_>) -> Vec<Step> {
         steps.extend(before::evening(scene));
         steps.extend(morning::walk_round(scene));
         steps.extend(morning::crank(scene));
-        steps.extend(morning::first_turn(scene));
+        if !scene.keeps_running() {
+            steps.extend(morning::first_turn(scene));
+        }
         steps.extend(morning::circulate(scene));
         steps.extend(morning::functions(scene));
         steps.extend(morning::load(scene));

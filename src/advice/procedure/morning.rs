@@ -3,7 +3,7 @@
 use super::{Bound, Phase, Reading, Scene, Step};
 use crate::advice::plan::PlanKind;
 use crate::advice::say::Figure::{
-    Difference, Number, Percent, Speed, Temperature, Time, Vacuum,
+    Difference, Number, Percent, Speed, Temperature, Time, Vacuum, Viscosity,
 };
 use crate::pump::Neutral;
 
@@ -16,6 +16,10 @@ const REST_S: f64 = 120.0;
 const JOG_S: f64 = 600.0;
 /// Longest idle at a stretch, s: TM 9-2320-272-10, for a truck.
 const IDLE_S: f64 = 900.0;
+/// Circulation shorter than this is the least there is, s: TM 9-2350-238-10.
+const SHORT_S: f64 = 300.0;
+/// No shorter burst is asked for, s: nobody times less.
+const LEAST_JOG_S: f64 = 5.0;
 /// A line that clears slower than this is warmed too, s.
 const CLEARS_S: f64 = 10.0;
 /// Where the pump is so much colder than the oil, it is warmed before any turn: times the jog limit.
@@ -30,6 +34,12 @@ pub(super) fn walk_round(scene: &Scene<'_>) -> Vec<Step> {
         * (scene.setup.bulk.density(found.soak_c)
             / scene.setup.bulk.density(case.duty.oil_temperature_max.as_celsius())
             - 1.0);
+    let jar = step(
+        "Tilt the jar that stood outside: the oil must run. Look for ice, a milky layer or jelly at the bottom.",
+        &[],
+    )
+    .stop("the oil in the jar does not run, or there is ice in it", &[])
+    .mind(&["water-in-oil"]);
     let mut steps = vec![
         step(
             "Read the air temperature at the machine and write it down.",
@@ -46,23 +56,20 @@ pub(super) fn walk_round(scene: &Scene<'_>) -> Vec<Step> {
         )
         .stop("the element or the suction is not covered", &[]),
         step(
-            "Tilt the jar that stood outside: the oil must run. Look for ice, a milky layer or jelly at the bottom.",
-            &[],
-        )
-        .stop("the oil in the jar does not run, or there is ice in it", &[])
-        .mind(&["water-in-oil"]),
-        step(
             "Suction valve fully open, breather free of ice, hoses not bent while cold, snow and ice off boom and linkage, wheels and tracks not frozen down, nobody near the machine.",
             &[],
         )
         .mind(&["hose-rating", "stiff-seals", "stored-energy"]),
     ];
+    if !scene.keeps_running() {
+        steps.insert(2, jar);
+    }
     if scene.heated() {
         let valid = found.heating.gate_valid_s.filter(|_| !scene.is(&[PlanKind::BlanketAndHold]));
         let template = if valid.is_some() {
-            "Heater: the thermostat must have cut out. Switch off, unplug, stow the cord before cranking. Start within {valid}; later, read the gate again or heat again."
+            "Heater: see that it has worked (lamp, breaker, warm tank). Switch off, unplug, stow the cord before cranking. Start within {valid} of that; later, heat again."
         } else {
-            "Heater: the thermostat must have cut out. Switch off, unplug, stow the cord before cranking, and start at once."
+            "Heater: see that it has worked (lamp, breaker, warm tank). Switch off, unplug, stow the cord before cranking, and start at once."
         };
         steps.push(
             step(template, &[("valid", Time(valid.unwrap_or_default()).into())])
@@ -81,7 +88,7 @@ pub(super) fn crank(scene: &Scene<'_>) -> Vec<Step> {
     let policy = &scene.case.policy.heat;
     let mut steps = vec![
         step(
-            "Read the oil at the suction fitting with a probe in the oil or strapped to the bare fitting under insulation: {gate} or warmer. An infrared thermometer must show {infrared} or more, on a dull spot of the fitting. The tank's own gauge does not count.",
+            "Read the oil where it leaves the tank, at the suction fitting, with a probe in the oil or strapped to the bare fitting under insulation: {gate} or warmer. An infrared thermometer must show {infrared} or more, on a dull spot of the fitting. The tank's own gauge does not count.",
             &[
                 ("gate", Temperature(gate).into()),
                 ("infrared", Temperature(gate + INFRARED_K).into()),
@@ -98,10 +105,8 @@ pub(super) fn crank(scene: &Scene<'_>) -> Vec<Step> {
     let limit = policy.warming_over_soak_k;
     let heated_pump = scene.case.machine.pump_heated;
     if scene.warm_tank() && (difference > limit || scene.found.heating.pump_warming) {
-        let fills = [
-            ("difference", Difference(difference).into()),
-            ("limit", Difference(limit).into()),
-        ];
+        let fills =
+            [("difference", Difference(difference).into()), ("limit", Difference(limit).into())];
         let template = if heated_pump {
             "Pump body: its own heater must have brought it to within {limit} of the oil. Read it with the probe on the housing."
         } else if difference > STOP_FACTOR * limit {
@@ -115,6 +120,9 @@ pub(super) fn crank(scene: &Scene<'_>) -> Vec<Step> {
                 .mind(&["hot-oil-cold-pump", "open-flame"]),
         );
     }
+    if scene.keeps_running() {
+        return steps;
+    }
     steps.push(
         step(
             "All levers neutral, clutch or power take-off of the pump out if it has one, so that the engine fires without hydraulic load. No burst of the starter over {burst}, then {rest} of rest.",
@@ -125,56 +133,87 @@ pub(super) fn crank(scene: &Scene<'_>) -> Vec<Step> {
     steps
 }
 
-/// Cold oil in the suction hose.
+/// Cold oil in the suction hose: the tank may be warm, the hose never is.
 fn cold_hose(scene: &Scene<'_>) -> Option<Step> {
+    if scene.is(&[PlanKind::WholeMachineHeat, PlanKind::KeepRunning]) {
+        return None;
+    }
     let turn = &scene.found.first_turn;
     let step = |template: &str, fills: &[_]| Step::new(Phase::Crank, template, fills);
-    if scene.found.at_soak.high.is_none() {
+    let bursts = [("burst", Time(BURST_S).into()), ("rest", Time(REST_S).into())];
+    let vacuum = scene.vacuum_limit_kpa();
+    let Some(high) = scene.found.at_soak.high else {
         return Some(
             step(
                 "The oil in the suction hose may have set. Warm the whole line with warm air or a heating tape first, never a flame; then jog without fuel, at most {burst} a time with {rest} of rest, until the vacuum gauge moves.",
-                &[("burst", Time(BURST_S).into()), ("rest", Time(REST_S).into())],
+                &bursts,
             )
-            .gate(Reading::InletVacuum, Bound::AtMostKpa(scene.vacuum_limit_kpa()))
-            .stop("no oil comes within {jog} of jogging: warm the line longer", &[("jog", Time(JOG_S).into())])
+            .gate(Reading::InletVacuum, Bound::AtMostKpa(vacuum))
+            .stop(
+                "no oil comes within {jog} of jogging: warm the line longer",
+                &[("jog", Time(JOG_S).into())],
+            )
             .mind(&["open-flame"]),
         );
-    }
-    let (clear, fill) = (turn.hose_clearing_s?, turn.hose_fill?);
-    if fill >= 1.0 {
+    };
+    let starved = turn.hose_fill.is_some_and(|fill| fill < 1.0);
+    let thick = scene.warm_tank() && high > scene.case.pump.viscosity_start_max.as_mm2_per_s();
+    if !starved && !scene.is(&[PlanKind::StartWarmTank]) && !thick {
         return None;
     }
-    let mut template = "Cold oil stands in the suction hose: at start speed the pump would fill to {fill} only. Crank without fuel, or jog, for {clear} in all, in bursts of at most {burst} with {rest} of rest, to draw it out.".to_owned();
+    let mut template = "Cold oil stands in the suction hose, up to {high} at {soak}.".to_owned();
+    if starved {
+        template.push_str(" At start speed the pump would fill to {fill} only.");
+    }
+    let Some(clear) = turn.hose_clearing_s.map(|clear| clear.max(LEAST_JOG_S)) else {
+        template.push_str(" How long it takes to draw it out was not computed, the suction line is not given: crank without fuel, or jog, in bursts of at most {burst} with {rest} of rest, until the vacuum falls.");
+        let [burst, rest] = bursts;
+        return Some(
+            step(
+                &template,
+                &[
+                    ("high", Viscosity(high).into()),
+                    ("soak", Temperature(scene.found.soak_c).into()),
+                    burst,
+                    rest,
+                ],
+            )
+            .gate(Reading::InletVacuum, Bound::AtMostKpa(vacuum)),
+        );
+    };
+    template.push_str(" Crank without fuel, or jog, for {clear} or longer to draw it out");
+    template.push_str(if clear > BURST_S {
+        ", in bursts of at most {burst} with {rest} of rest."
+    } else {
+        "."
+    });
     if clear > CLEARS_S {
         template.push_str(" Warm the line too, with warm air or a heating tape, never a flame.");
     }
+    let [burst, rest] = bursts;
     Some(
         step(
             &template,
             &[
-                ("fill", Percent(100.0 * fill).into()),
+                ("high", Viscosity(high).into()),
+                ("soak", Temperature(scene.found.soak_c).into()),
+                ("fill", Percent(100.0 * turn.hose_fill.unwrap_or(1.0)).into()),
                 ("clear", Time(clear).into()),
-                ("burst", Time(BURST_S.min(clear.max(1.0))).into()),
-                ("rest", Time(REST_S).into()),
+                burst,
+                rest,
             ],
         )
         .gate(Reading::Time, Bound::AtLeastS(clear))
-        .stop(
-            "the vacuum stays over {limit}",
-            &[("limit", Vacuum(scene.vacuum_limit_kpa()).into())],
-        )
+        .stop("the vacuum stays over {limit}", &[("limit", Vacuum(vacuum).into())])
         .mind(&["open-flame"]),
     )
 }
 
 /// When to stop, whatever the step.
 fn stop_signs(step: Step, scene: &Scene<'_>) -> Step {
-    step.stop(
-        "the vacuum passes {limit}",
-        &[("limit", Vacuum(scene.vacuum_limit_kpa()).into())],
-    )
-    .stop("the pump changes from a hum to a scream or a rattle: stop within moments", &[])
-    .stop("a function jerks, the oil foams, or a hose or seal sprays", &[])
+    step.stop("the vacuum passes {limit}", &[("limit", Vacuum(scene.vacuum_limit_kpa()).into())])
+        .stop("the pump changes from a hum to a scream or a rattle: stop within moments", &[])
+        .stop("a function jerks, the oil foams, or a hose or seal sprays", &[])
 }
 
 pub(super) fn first_turn(scene: &Scene<'_>) -> Vec<Step> {
@@ -230,6 +269,11 @@ pub(super) fn circulate(scene: &Scene<'_>) -> Vec<Step> {
     let idle = Time(IDLE_S);
     let mut steps = Vec::new();
     let first = match circulation.time_s {
+        Some(time) if time <= SHORT_S => step(
+            "Let it circulate in neutral for five to ten minutes; the oil is near full-load warmth once it is mixed. The filter alarm may show until it is warm: read it then.",
+            &[],
+        )
+        .expect(Some(SHORT_S)),
         Some(time) if time <= 3600.0 => step(
             "Let it circulate in neutral. Full load is about {time} away; idle no longer than {idle} at a stretch unless the manual allows it. The filter alarm may show until the oil is warm: read it then.",
             &[("time", Time(time).into()), ("idle", idle.into())],
