@@ -25,7 +25,8 @@
 //! ```
 //!
 //! In reading order: [`case`] (a machine at a site, read and checked), [`advice`] (limits, floors,
-//! heating, verdict), and what they stand on: [`oil`], [`pump`], [`heat`], [`air`], [`quantity`],
+//! heating, verdict), and what they stand on: [`climate`], [`oil`], [`pump`], [`heat`], [`air`],
+//! [`quantity`],
 //! [`source`]. `report` (feature `cli`, on by default) makes documents and JSON of the answers.
 //!
 //! The library opens no file, prints nothing and has no clock: the same case gives the same answer.
@@ -44,6 +45,7 @@
 pub mod advice;
 pub mod air;
 pub mod case;
+pub mod climate;
 pub mod heat;
 pub mod oil;
 pub mod pump;

@@ -57,7 +57,7 @@ fn every_example_of_the_key_table_is_read() {
             "oil.cold_viscosity" => file.set("oil.cold_viscosity.-20 °C", "4100 mPa·s"),
             "suction.fittings" => file.set("suction.fittings.butterfly", "1"),
             // Only for a closed loop; tried below.
-            "pump.charge_pressure" | "site.climate" => continue,
+            "pump.charge_pressure" => continue,
             _ => file.set(path, &example),
         };
         assert_eq!(result, Ok(()), "{path}");
@@ -149,7 +149,19 @@ fn one_message_a_fault() {
         ),
         (
             instead("\"-30 °C\"", "\"once in 20 winters\""),
-            "case.toml:3:23: site.minimum_temperature: `once in 20 winters` needs a climate with records; write the figure, for example `-38 °C`",
+            "case.toml:3:23: site.minimum_temperature: `once in 20 winters` needs a climate with records (site.climate); or write the figure, for example `-38 °C`",
+        ),
+        (
+            instead("\"-30 °C\"", "\"once in 20 winters\"\nclimate = \"C2\""),
+            "case.toml:3:23: site.minimum_temperature: climate `C2` does not hold `once in 20 winters`; it holds `class`",
+        ),
+        (
+            instead("\"-30 °C\"", "\"95 %\"\nclimate = \"skarn-ridge\""),
+            "case.toml:3:23: site.minimum_temperature: `95 %` is not kept in climate files; write `99.6 %` or `99 %`",
+        ),
+        (
+            instead("\"-30 °C\"", "\"record\"\nclimate = \"nowhere\""),
+            "case.toml:4:11: site.climate: no climate `nowhere` is known; name a climate file, or one of C0, C1, C2, C3, C4, skarn-ridge, hollow-pit, north-bench, tarn-landing",
         ),
         (
             instead("\"4 h\"", "\"0 h\""),

@@ -4,6 +4,7 @@ use super::clock::Clock;
 use super::fault::Faults;
 use super::file::CaseFile;
 use super::policy::Policy;
+use crate::climate::{self, BuiltIn, Sites};
 use crate::heat::{ElementKind, ElementPlace, Exposure};
 use crate::oil::Oil;
 use crate::pump::{Neutral, PumpKind, SuctionLine};
@@ -77,6 +78,18 @@ impl Edit {
     }
 }
 
+/// The climate a case has already, beside the built-in ones.
+struct Known<'a>(Option<&'a climate::Site>);
+
+impl Sites for Known<'_> {
+    fn site(&self, name: &str) -> Result<Option<climate::Site>, String> {
+        match self.0.filter(|site| site.name == name) {
+            Some(site) => Ok(Some(site.clone())),
+            None => BuiltIn.site(name),
+        }
+    }
+}
+
 impl Case {
     /// The same case with keys set over it, checked again.
     ///
@@ -87,7 +100,7 @@ impl Case {
         for edit in edits {
             file.set(&edit.key, &edit.value).map_err(|fault| Faults(vec![fault]))?;
         }
-        file.check()
+        file.check_in(&Known(self.site.climate.as_ref()))
     }
 
     /// The case lists its own oils; else the built-in classes stand in.
@@ -124,11 +137,24 @@ pub enum MinimumHow {
     AsMinimum,
 }
 
+impl MinimumHow {
+    /// How a climate's figure was come by.
+    #[must_use]
+    pub const fn of(how: climate::How) -> Self {
+        match how {
+            climate::How::Record => Self::Record,
+            climate::How::Percentile => Self::Percentile,
+            climate::How::ReturnLevel => Self::ReturnLevel,
+            climate::How::Class => Self::Class,
+        }
+    }
+}
+
 /// The site.
 #[derive(Debug, Clone)]
 pub struct Site {
-    /// Name of a climate, if one is named.
-    pub climate: Option<String>,
+    /// The climate, if one is named.
+    pub climate: Option<climate::Site>,
     /// Coldest temperature the machine must start at.
     pub minimum: Temperature,
     /// How the minimum was arrived at.

@@ -2,6 +2,7 @@
 
 use super::args::{AdviseArgs, AdviseFormat, LookArgs};
 use super::assess::{Trouble, file};
+use super::climate::Folders;
 use super::{DONE, FAILED, NO_PLAN, WRONG, output};
 use anyhow::Result;
 use coldsump::case::{Case, Units};
@@ -85,7 +86,8 @@ pub(crate) const fn worse(one: u8, other: u8) -> u8 {
 /// A case with keys set over it, and only some of its oils.
 pub(crate) fn case(path: &Path, sets: &[String], oils: &[String]) -> Result<Case, Trouble> {
     let mut file = file(path, sets)?;
-    let case = file.check().map_err(|faults| Trouble::Wrong(faults.to_string()))?;
+    let sites = Folders::of(path);
+    let case = file.check_in(&sites).map_err(|faults| Trouble::Wrong(faults.to_string()))?;
     if oils.is_empty() {
         return Ok(case);
     }
@@ -111,5 +113,5 @@ pub(crate) fn case(path: &Path, sets: &[String], oils: &[String]) -> Result<Case
                 .map_err(|fault| Trouble::Wrong(fault.to_string()))?;
         }
     }
-    file.check().map_err(|faults| Trouble::Wrong(faults.to_string()))
+    file.check_in(&sites).map_err(|faults| Trouble::Wrong(faults.to_string()))
 }

@@ -62,6 +62,9 @@ pub(crate) enum Command {
   coldsump assess *.toml --format json        one line a case
   cat loader.toml | coldsump assess -")]
     Assess(AssessArgs),
+    /// Sites and their cold
+    #[command(subcommand)]
+    Climate(ClimateCommand),
     /// One oil over temperature
     #[command(after_help = "Examples:
   coldsump oil HM-46 --at \"-40..100 °C by 10\"
@@ -69,6 +72,28 @@ pub(crate) enum Command {
       --base polymer-thickened --pour-point \"-39 °C\" --at \"-30 °C\"
   coldsump oil --file loader.toml --at \"-40..0 °C by 5\" --format csv")]
     Oil(OilArgs),
+}
+
+#[derive(Debug, Subcommand)]
+pub(crate) enum ClimateCommand {
+    /// Design classes, and the climates that are at hand
+    List,
+    /// One climate: its minima, wind, cold day, and where they come from
+    #[command(after_help = "Examples:
+  coldsump climate show C2
+  coldsump climate show skarn-ridge --units us
+  coldsump climate show climates/skarn-ridge.toml")]
+    Show(ClimateShowArgs),
+}
+
+#[derive(Debug, Args)]
+pub(crate) struct ClimateShowArgs {
+    /// A design class, a built-in site, or a climate file
+    #[arg(value_name = "NAME")]
+    pub(crate) name: String,
+    /// Units to show
+    #[arg(long, value_enum)]
+    pub(crate) units: Option<UnitsArg>,
 }
 
 #[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]

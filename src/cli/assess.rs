@@ -1,6 +1,7 @@
 //! `coldsump assess`.
 
 use super::args::{AssessArgs, AssessFormat, LookArgs};
+use super::climate::Folders;
 use super::{DONE, FAILED, WRONG, output};
 use anyhow::Result;
 use coldsump::case::{Case, CaseFile};
@@ -71,7 +72,9 @@ pub(crate) enum Trouble {
 
 /// A case file with keys set over it, checked.
 pub(crate) fn case(path: &Path, sets: &[String]) -> Result<Case, Trouble> {
-    file(path, sets)?.check().map_err(|faults| Trouble::Wrong(faults.to_string()))
+    file(path, sets)?
+        .check_in(&Folders::of(path))
+        .map_err(|faults| Trouble::Wrong(faults.to_string()))
 }
 
 /// A case file with keys set over it.

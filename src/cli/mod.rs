@@ -3,6 +3,7 @@
 mod advise;
 mod args;
 mod assess;
+mod climate;
 mod oil;
 mod output;
 
@@ -31,6 +32,7 @@ pub(crate) fn main() -> ExitCode {
         }
         Some(Command::Advise(args)) => advise::run(&args, &cli.look),
         Some(Command::Assess(args)) => assess::run(&args, &cli.look),
+        Some(Command::Climate(command)) => climate::run(&command, &cli.look),
         Some(Command::Oil(args)) => oil::run(&args, &cli.look),
     };
     match done {

@@ -5,7 +5,9 @@
 
 mod advice;
 mod assessment;
+mod climate;
 mod document;
+mod keys;
 mod markdown;
 mod oil;
 mod text;
@@ -14,7 +16,9 @@ mod wire;
 
 pub use advice::advice;
 pub use assessment::assessment;
+pub use climate::{climate, climates};
 pub use document::{Block, Document, Line, Span, Tone};
+pub use keys::key_list;
 pub use markdown::markdown;
 pub use oil::{oil_points, oil_points_csv};
 pub use text::{Look, ascii, text};

@@ -8,12 +8,14 @@ use super::super::file::CaseFile;
 use super::super::keys::{self, KeyKind};
 use super::super::model::{Assumption, From, Input};
 use super::TRADE;
+use crate::climate::Sites;
 use crate::oil::saybolt;
 use crate::quantity::{KinematicViscosity, Quantity, ViscosityReading, shown};
 
 /// One check under way: the file, and what was found so far.
 pub(super) struct Desk<'a> {
     pub(super) file: &'a CaseFile,
+    pub(super) sites: &'a dyn Sites,
     pub(super) faults: Vec<Fault>,
     pub(super) assumptions: Vec<Assumption>,
     pub(super) inputs: Vec<Input>,

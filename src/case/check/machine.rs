@@ -7,6 +7,7 @@ use super::super::model::{
 use super::super::policy::{self, Policy};
 use super::desk::Desk;
 use super::{JUDGEMENT, TRADE};
+use crate::climate::{self, Wish};
 use crate::pump::{Fitting, Neutral, PumpKind, Strainer, SuctionLine};
 use crate::quantity::{
     AbsolutePressure, Area, Power, Quantity, Temperature, Thickness, TimeSpan, Volume, shown,
@@ -40,37 +41,32 @@ impl Desk<'_> {
     }
 
     pub(super) fn site(&mut self) -> Option<Site> {
-        let climate = self.text("site.climate");
-        let minimum = match (self.file.text("site.minimum_temperature"), &climate) {
-            (Some(_), _) => self.minimum("site.minimum_temperature"),
-            (None, None) => {
-                self.missing("site.minimum_temperature");
-                None
-            }
-            (None, Some(name)) => {
-                let message = format!(
-                    "is missing, and no climate `{name}` is known to take it from; write for example `minimum_temperature = \"-38 °C\"`"
-                );
-                self.fault("site.minimum_temperature", message);
-                None
-            }
-        };
-        let (heating, heating_how) = if self.file.text("site.heating_temperature").is_some() {
-            (self.minimum("site.heating_temperature"), MinimumHow::Given)
-        } else {
-            if let Some(minimum) = minimum {
-                self.assume("site.heating_temperature", minimum.to_string(), "the minimum itself");
-            }
-            (minimum, MinimumHow::AsMinimum)
-        };
-        let wind = self.or_typical("site.wind", 2.0, JUDGEMENT);
-        let elevation = self.or_typical("site.elevation", 0.0, "sea level");
+        let climate = self.climate();
+        let minimum = self.minimum(climate.as_ref());
+        let heating = self.heating(climate.as_ref(), minimum.as_ref());
+        let wind = self.from_climate("site.wind", climate.as_ref(), |climate| {
+            let wind = climate.wind.as_ref()?;
+            let cold = heating.as_ref().is_some_and(|(heating, _)| {
+                climate
+                    .minima
+                    .percent_99
+                    .as_ref()
+                    .is_some_and(|p| heating.as_celsius() >= p.celsius)
+            });
+            Some(if cold { wind.at_99_m_s } else { wind.deep_cold_m_s })
+        });
+        let wind = wind.or_else(|| self.or_typical("site.wind", 2.0, JUDGEMENT));
+        let elevation =
+            self.from_climate("site.elevation", climate.as_ref(), |climate| climate.elevation_m);
+        let elevation = elevation.or_else(|| self.or_typical("site.elevation", 0.0, "sea level"));
         let clear_sky = self.switch("site.clear_sky").unwrap_or(false);
+        let (minimum, minimum_how) = minimum?;
+        let (heating, heating_how) = heating?;
         Some(Site {
             climate,
-            minimum: minimum?,
-            minimum_how: MinimumHow::Given,
-            heating: heating?,
+            minimum,
+            minimum_how,
+            heating,
             heating_how,
             wind: wind?,
             elevation: elevation?,
@@ -78,16 +74,116 @@ impl Desk<'_> {
         })
     }
 
-    /// A site temperature given as a figure. A minimum from records needs a climate.
-    pub(super) fn minimum(&mut self, key: &str) -> Option<Temperature> {
-        self.read(key, |text| {
-            if text == "record" || text.contains('%') || text.starts_with("once in") {
-                return Err(format!(
-                    "`{text}` needs a climate with records; write the figure, for example `-38 °C`"
-                ));
+    /// The climate a case names.
+    fn climate(&mut self) -> Option<climate::Site> {
+        let name = self.text("site.climate")?;
+        match self.sites.site(&name) {
+            // What a case calls it is what it is looked up by again.
+            Ok(Some(site)) => Some(climate::Site { name, ..site }),
+            Ok(None) => {
+                let known: Vec<&str> =
+                    climate::BuiltIn::all().iter().map(|site| site.name.as_str()).collect();
+                let message = format!(
+                    "no climate `{name}` is known; name a climate file, or one of {}",
+                    known.join(", ")
+                );
+                self.fault("site.climate", message);
+                None
             }
-            text.parse::<Temperature>().map_err(|e| e.to_string())
-        })
+            Err(message) => {
+                self.fault("site.climate", message);
+                None
+            }
+        }
+    }
+
+    /// A figure the climate holds, where the case does not give it.
+    fn from_climate<Q: Quantity>(
+        &mut self,
+        key: &str,
+        climate: Option<&climate::Site>,
+        of: impl Fn(&climate::Site) -> Option<f64>,
+    ) -> Option<Q> {
+        if self.file.text(key).is_some() {
+            return self.given(key);
+        }
+        let value = Q::of(of(climate?)?).ok()?;
+        self.note(key, &value.to_string(), From::Climate);
+        Some(value)
+    }
+
+    /// The coldest the machine must start at.
+    fn minimum(&mut self, climate: Option<&climate::Site>) -> Option<(Temperature, MinimumHow)> {
+        let key = "site.minimum_temperature";
+        if self.file.text(key).is_some() {
+            return self.wished(key, climate);
+        }
+        if self.file.text("site.climate").is_none() {
+            self.missing(key);
+            return None;
+        }
+        // A climate that is not known has its own fault.
+        let climate = climate?;
+        let Some((wish, found)) = climate.usual_minimum() else {
+            self.fault("site.climate", format!("`{}` holds no minimum", climate.name));
+            return None;
+        };
+        let value = Temperature::of(found.celsius).ok()?;
+        self.assume(key, format!("{wish}: {value}"), &found.words);
+        Some((value, MinimumHow::of(found.how)))
+    }
+
+    /// What the heater is sized for.
+    fn heating(
+        &mut self,
+        climate: Option<&climate::Site>,
+        minimum: Option<&(Temperature, MinimumHow)>,
+    ) -> Option<(Temperature, MinimumHow)> {
+        let key = "site.heating_temperature";
+        if self.file.text(key).is_some() {
+            return self.wished(key, climate);
+        }
+        let (minimum, how) = *minimum?;
+        let percent = climate.and_then(|site| site.temperature(Wish::Percent(99.6)).ok());
+        if let Some(found) = percent.filter(|found| found.celsius >= minimum.as_celsius()) {
+            let value = Temperature::of(found.celsius).ok()?;
+            self.assume(key, format!("99.6 %: {value}"), &found.words);
+            return Some((value, MinimumHow::Percentile));
+        }
+        self.assume(key, minimum.to_string(), "the minimum itself");
+        let how = if how == MinimumHow::Given { MinimumHow::AsMinimum } else { how };
+        Some((minimum, how))
+    }
+
+    /// A site temperature: a figure, or which of the climate's.
+    fn wished(
+        &mut self,
+        key: &str,
+        climate: Option<&climate::Site>,
+    ) -> Option<(Temperature, MinimumHow)> {
+        let unknown = climate.is_none() && self.file.text("site.climate").is_some();
+        let found = self.read(key, |text| {
+            let Some(wish) = Wish::read(text)? else {
+                return text
+                    .parse::<Temperature>()
+                    .map(|value| Some((value, MinimumHow::Given)))
+                    .map_err(|error| error.to_string());
+            };
+            let Some(climate) = climate else {
+                // Where a climate is named that is not known, that is the fault.
+                return if unknown {
+                    Ok(None)
+                } else {
+                    Err(format!(
+                        "`{text}` needs a climate with records (site.climate); or write the figure, for example `-38 °C`"
+                    ))
+                };
+            };
+            let found = climate.temperature(wish)?;
+            let value = Temperature::of(found.celsius).map_err(|error| error.to_string())?;
+            Ok(Some((value, MinimumHow::of(found.how))))
+        })?;
+        found
     }
 
     pub(super) fn machine(&mut self) -> Machine {

@@ -9,6 +9,7 @@ mod oils;
 use super::fault::Faults;
 use super::file::CaseFile;
 use super::model::{Case, Circuit, Duty, Pump, Reservoir, Site, Units};
+use crate::climate::{BuiltIn, Sites};
 use crate::quantity::Quantity;
 use desk::Desk;
 use std::sync::Arc;
@@ -20,8 +21,21 @@ impl CaseFile {
     /// Everything that is wrong, at once: unknown keys, values that cannot be read, required keys
     /// that are missing, contradictions.
     pub fn check(&self) -> Result<Case, Faults> {
-        let mut desk =
-            Desk { file: self, faults: Vec::new(), assumptions: Vec::new(), inputs: Vec::new() };
+        self.check_in(&BuiltIn)
+    }
+
+    /// As [`Self::check`], with other sites than the built-in ones to take a climate from.
+    ///
+    /// # Errors
+    /// As [`Self::check`], and a climate of that name that cannot be read.
+    pub fn check_in(&self, sites: &dyn Sites) -> Result<Case, Faults> {
+        let mut desk = Desk {
+            file: self,
+            sites,
+            faults: Vec::new(),
+            assumptions: Vec::new(),
+            inputs: Vec::new(),
+        };
         let case = desk.case();
         match case {
             Some(case) if desk.faults.is_empty() && self.faults.is_empty() => Ok(case),

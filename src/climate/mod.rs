@@ -1,0 +1,15 @@
+//! The site's cold: climate files, and what a case may ask of them.
+//!
+//! Invariants: a value of a site carries how it was got; what a file does not hold is "not known",
+//! never filled from something near; lag of the daily wave is read from an hourly day alone.
+
+mod built_in;
+mod site;
+mod wish;
+
+pub use built_in::{BuiltIn, Sites};
+pub use site::{
+    Below, ColdDay, Kind, Minima, Monthly, OnceIn, Place, Reading, Site, SiteError, Wind,
+    WinterMinimum,
+};
+pub use wish::{Found, How, Wish};
