@@ -44,7 +44,7 @@ impl Desk<'_> {
         let climate = self.climate();
         let minimum = self.minimum(climate.as_ref());
         let heating = self.heating(climate.as_ref(), minimum.as_ref());
-        let wind = self.from_climate("site.wind", climate.as_ref(), |climate| {
+        let wind = self.out_of_climate("site.wind", climate.as_ref(), |climate| {
             let wind = climate.wind.as_ref()?;
             let cold = heating.as_ref().is_some_and(|(heating, _)| {
                 climate
@@ -57,7 +57,7 @@ impl Desk<'_> {
         });
         let wind = wind.or_else(|| self.or_typical("site.wind", 2.0, JUDGEMENT));
         let elevation =
-            self.from_climate("site.elevation", climate.as_ref(), |climate| climate.elevation_m);
+            self.out_of_climate("site.elevation", climate.as_ref(), |climate| climate.elevation_m);
         let elevation = elevation.or_else(|| self.or_typical("site.elevation", 0.0, "sea level"));
         let clear_sky = self.switch("site.clear_sky").unwrap_or(false);
         let (minimum, minimum_how) = minimum?;
@@ -98,7 +98,7 @@ impl Desk<'_> {
     }
 
     /// A figure the climate holds, where the case does not give it.
-    fn from_climate<Q: Quantity>(
+    fn out_of_climate<Q: Quantity>(
         &mut self,
         key: &str,
         climate: Option<&climate::Site>,
@@ -162,7 +162,7 @@ impl Desk<'_> {
         climate: Option<&climate::Site>,
     ) -> Option<(Temperature, MinimumHow)> {
         let unknown = climate.is_none() && self.file.text("site.climate").is_some();
-        let found = self.read(key, |text| {
+        self.read(key, |text| {
             let Some(wish) = Wish::read(text)? else {
                 return text
                     .parse::<Temperature>()
@@ -182,8 +182,7 @@ impl Desk<'_> {
             let found = climate.temperature(wish)?;
             let value = Temperature::of(found.celsius).map_err(|error| error.to_string())?;
             Ok(Some((value, MinimumHow::of(found.how))))
-        })?;
-        found
+        })?
     }
 
     pub(super) fn machine(&mut self) -> Machine {
