@@ -509,16 +509,32 @@ impl Page<'_> {
             line = line.strong(", a floor hangs on it");
         }
         if let Some(range) = &confirm.range {
-            line = line.words(" (start from ").words(String::new());
-            let end = |line: Line, t: Option<f64>, key: &str| match t {
-                Some(t) => line
-                    .figure(self.shown.temperature(t), format!("{base}/range/start_floor/{key}")),
-                None => line.words("never"),
+            let moves = |ends: [Option<f64>; 2]| match ends {
+                [Some(one), Some(other)] => (one - other).abs() > 0.05,
+                [one, other] => one.is_some() != other.is_some(),
             };
-            line = end(line, range.start_floor_c[0], "from_c").words(" with ");
-            line = line.figure(range.from.clone(), format!("{base}/range/from")).words(", ");
-            line = end(line, range.start_floor_c[1], "to_c").words(" with ");
-            line = line.figure(range.to.clone(), format!("{base}/range/to")).words(")");
+            let floors = [
+                ("turn", "start_floor", range.start_floor_c),
+                ("full load", "work_floor", range.work_floor_c),
+            ];
+            for (name, key, ends) in floors {
+                if !moves(ends) {
+                    continue;
+                }
+                let end = |line: Line, t: Option<f64>, end: &str| match t {
+                    Some(t) => {
+                        line.figure(self.shown.temperature(t), format!("{base}/range/{key}/{end}"))
+                    }
+                    None => line.words("never"),
+                };
+                line = end(line.words(format!("; {name} from ")), ends[0], "from_c")
+                    .words(" with ")
+                    .figure(range.from.clone(), format!("{base}/range/from"))
+                    .words(", ");
+                line = end(line, ends[1], "to_c")
+                    .words(" with ")
+                    .figure(range.to.clone(), format!("{base}/range/to"));
+            }
         }
         let find =
             if one.ask.is_empty() { String::new() } else { format!("; find it: {}", one.ask) };
