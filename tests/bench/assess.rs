@@ -41,6 +41,27 @@ fn main() {
     let here = median(times);
     let per_oil = here / needed.len() as f64 * 1e6;
     println!("assess: {:.3} ms for {} oils, {per_oil:.1} µs an oil", here * 1e3, needed.len());
+    let timed = |what: &dyn Fn()| {
+        let one = || {
+            let start = Instant::now();
+            what();
+            start.elapsed().as_secs_f64()
+        };
+        median((0..100).map(|_| one()).collect())
+    };
+    let decide = timed(&|| {
+        black_box(advice::decide(black_box(&case)));
+    });
+    let advise = timed(&|| {
+        black_box(advice::advise(black_box(&case)));
+    });
+    println!(
+        "decide: {:.3} ms, {:.2} times that; advise: {:.2} ms, {:.0} times that",
+        decide * 1e3,
+        decide / here,
+        advise * 1e3,
+        advise / here
+    );
 
     let python = std::env::var("PYTHON").unwrap_or_else(|_| "python3".to_owned());
     let output = Command::new(&python)
