@@ -3,7 +3,7 @@
 use super::heating::Tank;
 use super::limits::Edge;
 use super::setup::Setup;
-use crate::heat;
+use crate::heat::{self, HeatCapacity};
 use crate::pump::{self, GRAVITY, Neutral};
 
 /// The first turn. Figures that do not exist are `None`, and `whys` says why.
@@ -124,6 +124,66 @@ pub(super) fn first_turn(
     turn
 }
 
+/// Running in neutral: the whole circuit, what warms it and what it loses.
+pub(super) struct Running {
+    capacity: HeatCapacity,
+    heat_w: f64,
+    loss_w_k: f64,
+    air_c: f64,
+    /// Tank and cold rest mixed, °C.
+    pub(super) mixed_c: f64,
+}
+
+impl Running {
+    /// Or why it cannot be known.
+    pub(super) fn new(
+        setup: &Setup<'_>,
+        tank: &Tank<'_>,
+        tank_c: f64,
+        start_floor: Option<f64>,
+    ) -> Result<Self, &'static str> {
+        let (case, policy) = (setup.case, &setup.case.policy.heat);
+        let neutral = case.pump.neutral.ok_or("what the oil does in neutral is not given")?;
+        let pressure = match neutral {
+            Neutral::ClosedLoop => case.pump.charge_pressure,
+            Neutral::OpenCentre | Neutral::LoadSensing => case.circuit.standby_pressure,
+        };
+        let pressure = pressure.ok_or("the pressure in neutral is not given")?;
+        if setup.flow_per_rpm <= 0.0 {
+            return Err("the pump displacement is not given");
+        }
+        let share = match neutral {
+            Neutral::LoadSensing => policy.load_sensing_share,
+            Neutral::OpenCentre | Neutral::ClosedLoop => 1.0,
+        };
+        let flow = setup.flow_per_rpm * case.pump.start_speed.as_rpm();
+        let heat_w = heat::circulation_heat_w(share, flow, pressure.as_kpa() * 1000.0);
+        let loss_w_k = match (case.circuit.heat_loss, start_floor) {
+            (Some(given), _) => given.as_w_per_k(),
+            (None, Some(floor)) => {
+                let at = floor.max(setup.air_c + 10.0);
+                policy.circuit_loss_factor * tank.loss.ua(at)
+            }
+            (None, None) => return Err("there is no start floor"),
+        };
+        let (warm, cold) = (tank.capacity.at(15.0), tank.rest.at(15.0));
+        let mixed_c = heat::mixed_c(warm, tank_c, cold, setup.soak_c);
+        let capacity = tank.capacity.plus(&tank.rest);
+        Ok(Self { capacity, heat_w, loss_w_k, air_c: setup.air_c, mixed_c })
+    }
+
+    /// Where it ends, °C.
+    pub(super) fn steady_c(&self) -> f64 {
+        heat::circulation_steady_c(self.heat_w, self.loss_w_k, self.air_c)
+    }
+
+    /// Time from the mixed temperature to another, s; `None` where it never gets there.
+    pub(super) fn time_s(&self, to_c: f64) -> Option<f64> {
+        let (heat, loss) = (self.heat_w, self.loss_w_k);
+        heat::circulation_time_s(&self.capacity, heat, loss, self.air_c, self.mixed_c, to_c)
+    }
+}
+
 /// Circulation from the mixed temperature to the work floor.
 pub(super) fn circulation(
     setup: &Setup<'_>,
@@ -132,36 +192,11 @@ pub(super) fn circulation(
     start_floor: Option<f64>,
     work_floor: Option<f64>,
 ) -> Circulation {
-    let (case, policy) = (setup.case, &setup.case.policy.heat);
-    let not = |why| Circulation { why: Some(why), ..Circulation::default() };
-    let Some(neutral) = case.pump.neutral else {
-        return not("what the oil does in neutral is not given");
+    let running = match Running::new(setup, tank, tank_c, start_floor) {
+        Ok(running) => running,
+        Err(why) => return Circulation { why: Some(why), ..Circulation::default() },
     };
-    let pressure = match neutral {
-        Neutral::ClosedLoop => case.pump.charge_pressure,
-        Neutral::OpenCentre | Neutral::LoadSensing => case.circuit.standby_pressure,
-    };
-    let Some(pressure) = pressure else {
-        return not("the pressure in neutral is not given");
-    };
-    if setup.flow_per_rpm <= 0.0 {
-        return not("the pump displacement is not given");
-    }
-    let share = match neutral {
-        Neutral::LoadSensing => policy.load_sensing_share,
-        Neutral::OpenCentre | Neutral::ClosedLoop => 1.0,
-    };
-    let flow = setup.flow_per_rpm * case.pump.start_speed.as_rpm();
-    let heat_w = heat::circulation_heat_w(share, flow, pressure.as_kpa() * 1000.0);
-    let loss = match (case.circuit.heat_loss, start_floor) {
-        (Some(given), _) => given.as_w_per_k(),
-        (None, Some(floor)) => {
-            let at = floor.max(setup.air_c + 10.0);
-            policy.circuit_loss_factor * tank.loss.ua(at)
-        }
-        (None, None) => return not("there is no start floor"),
-    };
-    let steady = heat::circulation_steady_c(heat_w, loss, setup.air_c);
+    let steady = running.steady_c();
     let Some(work_floor) = work_floor else {
         return Circulation {
             steady_c: Some(steady),
@@ -169,9 +204,7 @@ pub(super) fn circulation(
             why: Some("there is no work floor"),
         };
     };
-    let mixed = heat::mixed_c(tank.capacity.at(15.0), tank_c, tank.rest.at(15.0), setup.soak_c);
-    let whole = tank.capacity.plus(&tank.rest);
-    let time = heat::circulation_time_s(&whole, heat_w, loss, setup.air_c, mixed, work_floor);
+    let time = running.time_s(work_floor);
     Circulation {
         time_s: time,
         steady_c: Some(steady),

@@ -1,6 +1,7 @@
 //! Heating: how warm, how much power, which heater, how hot its skin.
 
 use super::setup::Setup;
+use crate::case::Case;
 use crate::heat::{
     self, Chosen, ElementKind, ElementPlace, HeatCapacity, LossCurve, OilFilm, Rod, TankLoss,
     Walls, Wanted, WarmUp,
@@ -251,8 +252,7 @@ impl<'a> Tank<'a> {
         let mut tank = Self { capacity, rest, loss, curve, soak_c: setup.air_c };
         if let (Some(oil), Some(at)) = (parked, case.duty.parked_at) {
             let hours = at.hours_until(case.duty.shift_start);
-            let factor =
-                if case.reservoir.cooldown.is_some() { 1.0 } else { policy.loss_uncertainty };
+            let factor = parked_loss_factor(case);
             let air = setup.air_c;
             let cooled = heat::parked_c(
                 &tank.curve,
@@ -266,6 +266,11 @@ impl<'a> Tank<'a> {
         }
         tank
     }
+}
+
+/// What the loss of a parked tank is multiplied by: nothing where it was measured.
+pub(super) fn parked_loss_factor(case: &Case) -> f64 {
+    if case.reservoir.cooldown.is_some() { 1.0 } else { case.policy.heat.loss_uncertainty }
 }
 
 /// Heating of one oil towards its start floor, °C; `gels` where it does not flow in the lines.

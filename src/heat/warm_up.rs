@@ -101,6 +101,48 @@ impl WarmUp {
         if power_w > self.worst { Some(self.time_over_loss(power_w).0) } else { None }
     }
 
+    /// The way there with a power in W into the oil: (s, °C) from the start on. `None` where
+    /// [`WarmUp::time_s`] has none, with which its last point agrees.
+    ///
+    /// # Example
+    /// ```
+    /// use coldsump::heat::{HeatCapacity, LossCurve, TankLoss, WarmUp};
+    /// use coldsump::{oil::Bulk, quantity::Density};
+    ///
+    /// let loss = TankLoss::from_u_value(7.0, 2.0, -30.0);
+    /// let bulk = Bulk::from_density_15(Density::kg_per_m3(870.0)?);
+    /// let capacity = HeatCapacity::new(200.0, &bulk, 40.0, 440.0);
+    /// let way = WarmUp::new(&LossCurve::new(&loss, 60.0), &capacity, -30.0, 0.0, 1.0);
+    /// let path = way.path(1500.0).expect("1500 W is over the loss of 420 W");
+    /// assert_eq!(path.first(), Some(&(0.0, -30.0)));
+    /// assert_eq!(path.last().map(|end| end.0), way.time_s(1500.0));
+    /// # Ok::<(), coldsump::quantity::QuantityError>(())
+    /// ```
+    #[must_use]
+    pub fn path(&self, power_w: f64) -> Option<Vec<(f64, f64)>> {
+        let total = self.time_s(power_w)?;
+        let mut path = vec![(0.0, self.joints[0].0)];
+        if total <= 0.0 {
+            return Some(path);
+        }
+        let mean = |a: &(f64, f64, f64), b: &(f64, f64, f64)| {
+            f64::midpoint(a.1, b.1) * (b.0 - a.0) * mean_of_inverse(power_w - a.2, power_w - b.2)
+        };
+        let mut time = 0.0;
+        for pair in self.joints.windows(3).step_by(2) {
+            if let [a, b, c] = pair {
+                let fine = mean(a, b) + mean(b, c);
+                time += fine + (fine - mean(a, c)) / 3.0;
+                path.push((time, c.0));
+            }
+        }
+        // The same sum in another order: the ends are one to rounding, and made one.
+        if let Some(end) = path.last_mut() {
+            end.0 = total;
+        }
+        Some(path)
+    }
+
     /// Time in s and how fast it falls with power, s/W, for a power over the loss.
     fn time_over_loss(&self, power_w: f64) -> (f64, f64) {
         let (mut fine, mut coarse, mut fall) = (0.0, 0.0, 0.0);

@@ -5,6 +5,7 @@
 
 mod advice;
 mod assessment;
+pub mod chart;
 mod climate;
 mod document;
 mod keys;
