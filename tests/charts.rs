@@ -33,7 +33,9 @@ fn show() {
             charts.push(("speed", c));
         }
         let night = advice::night(&case, oil, one);
-        charts.push(("night", chart::overnight(&case, one, &night, units)));
+        if let Some(c) = chart::overnight(&case, one, &night, units) {
+            charts.push(("night", c));
+        }
         for (what, c) in charts {
             std::fs::write(format!("{dir}/{name}-{what}.svg"), chart::svg(&c)).unwrap();
             std::fs::write(

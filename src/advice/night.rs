@@ -20,6 +20,9 @@ pub struct Night {
     pub parked_h: Option<f64>,
     /// When the heater is switched on, h; `None` where none is.
     pub switch_on_h: Option<f64>,
+    /// What the oil comes to when the tank mixes with the cold rest of the circuit, °C; `None` where
+    /// no start is followed.
+    pub mixed_c: Option<f64>,
     /// What is known of the way, in order.
     pub parts: Vec<NightPart>,
     /// What it rests on, and what could not be drawn.
@@ -61,7 +64,11 @@ impl Stretch {
 
 /// Step between the points of the cooling, h.
 const STEP_H: f64 = 0.25;
-/// Running in neutral is followed no longer than this, h.
+/// Running in neutral is followed at least so long, h.
+const LEAST_RUNNING_H: f64 = 0.5;
+/// And no further than this, K.
+const MOST_RISE_K: f64 = 60.0;
+/// And no longer than this, h.
 const LONGEST_RUNNING_H: f64 = 2.0;
 
 /// Follows one oil of a case through the night, by the loss curve that its heating was sized on.
@@ -82,6 +89,7 @@ pub fn night(case: &Case, oil: &Oil, found: &Assessment) -> Night {
         air_c: setup.air_c,
         parked_h: case.duty.parked_at.map(|at| -at.hours_until(start)),
         switch_on_h: None,
+        mixed_c: None,
         parts: Vec::new(),
         remarks: Vec::new(),
     };
@@ -134,6 +142,7 @@ pub fn night(case: &Case, oil: &Oil, found: &Assessment) -> Night {
         let tank_c = target.unwrap_or(tank.soak_c);
         match Running::new(&setup, &tank, tank_c, found.start_floor.at_c) {
             Ok(running) => {
+                night.mixed_c = Some(running.mixed_c);
                 let points = running_points(&running, tank_c, found.work_floor.at_c);
                 night.parts.push(NightPart { kind: Stretch::Running, points });
                 night.remarks.push(
@@ -141,7 +150,7 @@ pub fn night(case: &Case, oil: &Oil, found: &Assessment) -> Night {
                 );
             }
             Err(why) => {
-                night.remarks.push(Say::from(format!("No running in neutral is drawn: {why}.")))
+                night.remarks.push(Say::from(format!("No running in neutral is drawn: {why}.")));
             }
         }
         if let Some(why) = found.circulation.why.filter(|_| found.circulation.steady_c.is_some()) {
@@ -174,21 +183,23 @@ fn cooling(tank: &Tank<'_>, parked_c: f64, (from, to): (f64, f64), case: &Case) 
     points
 }
 
-/// From the tank at the gate through the mix to the work floor, or as far as two hours lead.
+/// From the tank at the gate through the mix to the work floor, or as far as two hours lead. Where it
+/// would cool in neutral nothing is followed.
 fn running_points(running: &Running, tank_c: f64, work_floor: Option<f64>) -> Vec<(f64, f64)> {
     let mut points = vec![(0.0, tank_c), (0.0, running.mixed_c)];
     let mixed = running.mixed_c;
     let steady = running.steady_c();
-    let reachable = mixed + 0.98 * (steady - mixed);
-    let to = work_floor.unwrap_or(f64::INFINITY).min(reachable);
-    if !(to > mixed && to.is_finite()) {
-        return points;
-    }
-    const PIECES: u32 = 40;
+    let floor = work_floor.unwrap_or(f64::INFINITY);
+    // Steps of temperature up to close to where it ends; without a loss there is no end.
+    let end = mixed + 0.98 * (steady.min(mixed + MOST_RISE_K) - mixed);
+    const PIECES: u32 = 100;
     for piece in 1..=PIECES {
-        let t = mixed + (to - mixed) * f64::from(piece) / f64::from(PIECES);
-        let Some(hours) = running.time_s(t).map(|s| s / 3600.0) else { break };
-        if hours > LONGEST_RUNNING_H {
+        let t = mixed + (end - mixed) * f64::from(piece) / f64::from(PIECES);
+        let Some(hours) = running.time_s(t).map(|s| s / 3600.0).filter(|_| end > mixed) else {
+            break;
+        };
+        let done = points.last().is_some_and(|(h, t)| *t >= floor && *h >= LEAST_RUNNING_H);
+        if done || hours > LONGEST_RUNNING_H {
             break;
         }
         points.push((hours, t));

@@ -60,8 +60,9 @@ pub struct Axis {
 }
 
 /// Viscosities worth a tick, mm²/s.
-const VISCOSITIES: [f64; 14] =
-    [1.0, 2.0, 3.0, 5.0, 10.0, 25.0, 50.0, 100.0, 500.0, 2000.0, 10_000.0, 100_000.0, 1e6, 1e7];
+const VISCOSITIES: [f64; 15] = [
+    1.0, 1.5, 2.0, 3.0, 5.0, 10.0, 25.0, 50.0, 100.0, 500.0, 2000.0, 10_000.0, 100_000.0, 1e6, 1e7,
+];
 
 impl Axis {
     /// Where a value lies: 0 at the start, 1 at the end, beyond either outside.
@@ -90,7 +91,7 @@ impl Axis {
             Units::Metric => ("°C", 1.0, 0.0),
             Units::Us => ("°F", 1.8, 32.0),
         };
-        Self::even(format!("{what}, {unit}"), scale, (from, to), (factor, offset), 12.0)
+        Self::even(format!("{what}, {unit}"), scale, (from, to), (factor, offset), (12.0, 0.25))
     }
 
     /// Viscosities in mm²/s that take in `from` to `to`.
@@ -99,7 +100,7 @@ impl Axis {
         let above = VISCOSITIES.iter().find(|tick| **tick >= to);
         let (from, to) = (*below.unwrap_or(&1.0), *above.unwrap_or(&1e7));
         let ticks = VISCOSITIES.iter().filter(|at| (from..=to).contains(at));
-        let ticks = ticks.map(|at| Tick { at: *at, text: thousands(*at) }).collect();
+        let ticks = ticks.map(|at| Tick { at: *at, text: viscosity_text(*at) }).collect();
         let unit = if units == Units::Us { "mm²/s (the same as cSt)" } else { "mm²/s" };
         Self { label: format!("viscosity, {unit}"), scale: Scale::LogLog, from, to, ticks }
     }
@@ -110,12 +111,12 @@ impl Axis {
             Units::Metric => ("kPa absolute", 1.0),
             Units::Us => ("psi absolute", 1.0 / 6.894_757),
         };
-        Self::even(format!("{what}, {unit}"), Scale::Linear, (from, to), (factor, 0.0), 8.0)
+        Self::even(format!("{what}, {unit}"), Scale::Linear, (from, to), (factor, 0.0), (8.0, 1.0))
     }
 
     /// Speeds in rpm that take in zero to `to`.
     pub(super) fn speed(what: &str, to: f64) -> Self {
-        Self::even(format!("{what}, rpm"), Scale::Linear, (0.0, to), (1.0, 0.0), 8.0)
+        Self::even(format!("{what}, rpm"), Scale::Linear, (0.0, to), (1.0, 0.0), (8.0, 1.0))
     }
 
     /// Hours from `zero`, labelled with the time of day; takes in `from` to `to`.
@@ -141,13 +142,14 @@ impl Axis {
         axis
     }
 
-    /// Ticks at round values of what is shown, `factor · value + offset`; both ends on a tick.
+    /// At most so many ticks at round values of what is shown, `factor · value + offset`; both ends on
+    /// `snap` of the step between ticks.
     fn even(
         label: String,
         scale: Scale,
         (from, to): (f64, f64),
         (factor, offset): (f64, f64),
-        most: f64,
+        (most, snap): (f64, f64),
     ) -> Self {
         let (low, high) = (factor * from + offset, factor * to + offset);
         let span = (high - low).max(1e-6);
@@ -156,22 +158,27 @@ impl Axis {
         let step = steps.iter().map(|n| n * magnitude).find(|step| span / step <= most);
         let step = step.unwrap_or(10.0 * magnitude);
         let decimals = if step < 1.0 { 1 } else { 0 };
-        let (first, last) = ((low / step).floor(), (high / step).ceil().max(low / step + 1.0));
+        let edge = snap * step;
+        let (first, mut last) = ((low / edge).floor() * edge, (high / edge).ceil() * edge);
+        if last <= first {
+            last = first + edge;
+        }
+        let back = |shown: f64| (shown - offset) / factor;
         let mut ticks = Vec::new();
-        let mut at = first;
-        while at <= last + 1e-9 {
+        let mut at = (first / step - 1e-9).ceil();
+        while at * step <= last + 1e-9 * step {
             let shown = at * step;
-            let text = if decimals == 0 && shown.abs() >= 10_000.0 {
-                thousands(shown)
-            } else {
-                fixed(shown, decimals)
-            };
-            ticks.push(Tick { at: (shown - offset) / factor, text });
+            let text = if decimals == 0 { thousands(shown) } else { fixed(shown, decimals) };
+            ticks.push(Tick { at: back(shown), text });
             at += 1.0;
         }
-        let end = |tick: Option<&Tick>, other: f64| tick.map_or(other, |tick| tick.at);
-        Self { label, scale, from: end(ticks.first(), from), to: end(ticks.last(), to), ticks }
+        Self { label, scale, from: back(first), to: back(last), ticks }
     }
+}
+
+/// A viscosity beside its tick.
+fn viscosity_text(value: f64) -> String {
+    if value.fract() > 0.0 { fixed(value, 1) } else { thousands(value) }
 }
 
 /// A whole number, its thousands set apart from 10 000 up.

@@ -2,6 +2,9 @@
 
 use super::model::Chart;
 
+/// A place on the chart.
+type Place = (f64, f64);
+
 /// Lines of a path inside the chart, in places (0 to 1, from the lower left).
 ///
 /// Each segment is cut as Y.-D. Liang and B. A. Barsky do, ACM Transactions on Graphics 3 (1984) 1
@@ -18,6 +21,32 @@ pub(super) fn inside(chart: &Chart, path: &[(f64, f64)]) -> Vec<Vec<(f64, f64)>>
         }
     }
     out
+}
+
+/// A closed outline in places, cut off at the sides of the unit square.
+///
+/// One side after the other, as I. E. Sutherland and G. W. Hodgman do, Communications of the ACM 17
+/// (1974) 32 (memory).
+pub(super) fn outline(places: &[Place]) -> Vec<Place> {
+    // How far inside a point is, from each side.
+    let sides: [fn(&Place) -> f64; 4] = [|p| p.0, |p| 1.0 - p.0, |p| p.1, |p| 1.0 - p.1];
+    let mut corners: Vec<Place> =
+        places.iter().copied().filter(|(x, y)| x.is_finite() && y.is_finite()).collect();
+    for side in sides {
+        let mut kept = Vec::with_capacity(corners.len() + 4);
+        for (a, b) in corners.iter().zip(corners.iter().cycle().skip(1)) {
+            let (from, to) = (side(a), side(b));
+            if from >= 0.0 {
+                kept.push(*a);
+            }
+            if (from >= 0.0) != (to >= 0.0) {
+                let share = from / (from - to);
+                kept.push((a.0 + share * (b.0 - a.0), a.1 + share * (b.1 - a.1)));
+            }
+        }
+        corners = kept;
+    }
+    corners
 }
 
 fn near(a: (f64, f64), b: (f64, f64)) -> bool {
@@ -48,7 +77,24 @@ fn cut(a: (f64, f64), b: (f64, f64)) -> Option<((f64, f64), (f64, f64))> {
 
 #[cfg(test)]
 mod tests {
-    use super::cut;
+    use super::{cut, outline};
+
+    #[test]
+    fn an_outline_is_cut_at_each_side() {
+        let diamond = [(0.5, -0.5), (1.5, 0.5), (0.5, 1.5), (-0.5, 0.5)];
+        let cut = outline(&diamond);
+        let inside = |at: &f64| (-1e-12..=1.0 + 1e-12).contains(at);
+        assert!(cut.len() >= 4 && cut.iter().all(|(x, y)| inside(x) && inside(y)), "{cut:?}");
+        // Half of it lies outside: the rest is the square itself.
+        assert!((area(&cut) - 1.0).abs() < 1e-12);
+        assert!((area(&diamond) - 2.0).abs() < 1e-12);
+        assert!(outline(&[(2.0, 2.0), (3.0, 2.0), (3.0, 3.0)]).is_empty());
+    }
+
+    fn area(corners: &[(f64, f64)]) -> f64 {
+        let next = corners.iter().cycle().skip(1);
+        corners.iter().zip(next).map(|(a, b)| (a.0 * b.1 - b.0 * a.1) / 2.0).sum()
+    }
 
     #[test]
     fn cuts_at_each_side() {

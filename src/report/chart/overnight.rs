@@ -8,9 +8,13 @@ use crate::report::units::Shown;
 
 /// Oil temperature against the time of day: parked and cooling, heated, warmed by running.
 ///
-/// Lines across are the gates: what the oil must have come to before each step.
+/// Lines across are the gates: what the oil must have come to before each step. `None` where nothing
+/// of the night is known; the night's own remarks say why.
 #[must_use]
-pub fn overnight(case: &Case, found: &Assessment, night: &Night, units: Units) -> Chart {
+pub fn overnight(case: &Case, found: &Assessment, night: &Night, units: Units) -> Option<Chart> {
+    if night.parts.is_empty() {
+        return None;
+    }
     let gate = found.start_floor.at_c.map(|floor| floor + case.policy.heat.gate_margin_k);
     let levels = [
         ("air", Some(night.air_c)),
@@ -56,8 +60,10 @@ pub fn overnight(case: &Case, found: &Assessment, night: &Night, units: Units) -
             chart.mark(words, hour, clock(hour));
         }
     }
+    let mixed = night.mixed_c.map(|t| (0.0, t));
+    chart.draw("tank mixed with the cold rest", Shape::Points(mixed.into_iter().collect()));
     chart.notes.extend(night.remarks.iter().map(|remark| Shown(units).say(remark)));
-    chart
+    Some(chart)
 }
 
 /// The time of day so many hours after a clock time.

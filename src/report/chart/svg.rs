@@ -4,7 +4,7 @@
 //! Colours are the text's own, so that the chart follows the page it stands in.
 
 use super::axis::Axis;
-use super::clip::inside;
+use super::clip::{inside, outline};
 use super::model::{Chart, Level, Shape};
 use super::place::{Area, Clear, Piece, lines, over, text_width};
 use std::fmt::Write;
@@ -155,12 +155,16 @@ impl<'a> Page<'a> {
 
     /// What of a path lies in the frame.
     fn pixels(&self, path: &[(f64, f64)]) -> Vec<Vec<(f64, f64)>> {
-        let Area { left, right, bottom, .. } = self.frame;
-        let at = |(x, y): (f64, f64)| (left + x * (right - left), bottom - y * HEIGHT);
         inside(self.chart, path)
             .into_iter()
-            .map(|line| line.into_iter().map(at).collect())
+            .map(|line| line.into_iter().map(|place| self.pixel(place)).collect())
             .collect()
+    }
+
+    /// A place from 0 to 1 on the drawing.
+    fn pixel(&self, (x, y): (f64, f64)) -> (f64, f64) {
+        let Area { left, right, bottom, .. } = self.frame;
+        (left + x * (right - left), bottom - y * HEIGHT)
     }
 
     fn axes(&self, out: &mut String) {
@@ -249,16 +253,15 @@ impl<'a> Page<'a> {
 
     /// A band: lightly filled, its edges thin.
     fn band(&self, out: &mut String, points: &[(f64, f64, f64)]) {
-        let held = |y: f64| self.y(y).clamp(self.frame.top, self.frame.bottom);
-        let within: Vec<&(f64, f64, f64)> =
-            points.iter().filter(|point| self.chart.x.holds(point.0)).collect();
-        let lower = within.iter().map(|(x, low, _)| (self.x(*x), held(*low)));
-        let upper = within.iter().rev().map(|(x, _, high)| (self.x(*x), held(*high)));
-        let outline: Vec<(f64, f64)> = lower.chain(upper).collect();
+        let place = |x: f64, y: f64| (self.chart.x.place(x), self.chart.y.place(y));
+        let lower = points.iter().map(|(x, low, _)| place(*x, *low));
+        let upper = points.iter().rev().map(|(x, _, high)| place(*x, *high));
+        let corners = outline(&lower.chain(upper).collect::<Vec<_>>());
+        let corners: Vec<(f64, f64)> = corners.into_iter().map(|place| self.pixel(place)).collect();
         let _ = writeln!(
             out,
             "<polygon class=\"band\" points=\"{}\" fill-opacity=\"0.1\" stroke=\"none\"/>",
-            points_text(&outline)
+            points_text(&corners)
         );
         for line in Shape::Band(points.to_vec()).paths().iter().flat_map(|path| self.pixels(path)) {
             let _ = writeln!(
@@ -293,7 +296,7 @@ impl<'a> Page<'a> {
             );
             match place {
                 Some((row, start)) => {
-                    text(out, "label", *start, label_bottom(*row) - 2.5, &mark.text())
+                    text(out, "label", *start, label_bottom(*row) - 2.5, &mark.text());
                 }
                 None => key.push(format!("line up at {}: {}", mark.value, mark.words)),
             }
@@ -316,7 +319,7 @@ impl<'a> Page<'a> {
             let mut candidates = Vec::new();
             for top in [y - size.1 - 1.5, y + 1.5] {
                 let mut start = right - 4.0 - size.0;
-                while start >= left {
+                while start >= left + 4.0 {
                     candidates.push((start, top));
                     start -= 12.0;
                 }
@@ -334,8 +337,12 @@ impl<'a> Page<'a> {
             let size = (text_width(&number, SIZE), SIZE + 1.0);
             let lines: Vec<Vec<(f64, f64)>> =
                 one.shape.paths().iter().flat_map(|path| self.pixels(path)).collect();
-            let around =
-                [(3.0, -size.1 - 1.0), (-size.0 - 3.0, 1.0), (-size.0 / 2.0, -size.1 - 3.0)];
+            let around = [
+                (3.0, -size.1 - 1.0),
+                (-size.0 - 5.0, -size.1 / 2.0),
+                (-size.0 - 3.0, 1.0),
+                (-size.0 / 2.0, -size.1 - 3.0),
+            ];
             let candidates = lines
                 .iter()
                 .flatten()
@@ -463,11 +470,7 @@ fn sample(out: &mut String, shape: &Shape, x: f64, y: f64, dash: &str) {
 }
 
 /// Ticks that have room beside each other: (place, text). `needs` is the room of a text.
-fn ticks<'a>(
-    axis: &'a Axis,
-    place: impl Fn(f64) -> f64,
-    needs: impl Fn(&str) -> f64,
-) -> Vec<(f64, &'a str)> {
+fn ticks(axis: &Axis, place: impl Fn(f64) -> f64, needs: impl Fn(&str) -> f64) -> Vec<(f64, &str)> {
     let mut out: Vec<(f64, &str)> = Vec::new();
     for tick in &axis.ticks {
         let at = place(tick.at);

@@ -193,13 +193,19 @@ impl Drawing<'_> {
                 (_, number) => {
                     line += 1;
                     let sign = SIGNS.get((line - 1) % SIGNS.len()).copied().unwrap_or('*');
-                    let sign = if self.grid.ascii { sign.to_string() } else { "line".to_owned() };
+                    let ascii = self.grid.ascii;
                     match number {
                         Some(number) => {
                             self.number(&one.shape, number);
-                            format!("{number} {sign} {}", one.name)
+                            let tag = digit(number);
+                            if ascii {
+                                format!("{tag} {sign} {}", one.name)
+                            } else {
+                                format!("{tag} {}", one.name)
+                            }
                         }
-                        None => format!("{sign} {}", one.name),
+                        None if ascii => format!("{sign} {}", one.name),
+                        None => format!("⠤⠤ {}", one.name),
                     }
                 }
             };
@@ -250,7 +256,7 @@ impl Drawing<'_> {
 
     /// A number on its curve, near the cold end, where nothing else is named.
     fn number(&mut self, shape: &Shape, number: usize) {
-        let Some(sign) = char::from_digit(u32::try_from(number).unwrap_or(36), 36) else { return };
+        let sign = digit(number);
         let cells: Vec<(usize, usize)> = shape
             .paths()
             .iter()
@@ -419,6 +425,12 @@ impl Grid {
             })
             .collect()
     }
+}
+
+/// The character for a number: 1 to 9, then small letters; more than 34 lines share the last.
+fn digit(number: usize) -> char {
+    let digit = u32::try_from(number.min(35)).ok().and_then(|number| char::from_digit(number, 36));
+    digit.unwrap_or('z')
 }
 
 /// The cell out of `count` that a place from 0 to 1 falls in.

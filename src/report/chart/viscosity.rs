@@ -29,7 +29,8 @@ pub fn viscosity(case: &Case, oils: &[(&Oil, &Assessment)], units: Units) -> Cha
     let soak = setups.first().map_or(case.site.minimum.as_celsius(), |setup| setup.soak_c);
 
     let pours = oils.iter().filter_map(|(oil, _)| oil.pour_point()).map(|pour| pour.as_celsius());
-    let colds = pours.clone().filter(|pour| *pour > soak - FAR_BELOW_K);
+    // The pour points of several oils have no line.
+    let colds = pours.clone().filter(|pour| alone && *pour > soak - FAR_BELOW_K);
     let floors = oils.iter().filter_map(|(_, found)| found.start_floor.at_c);
     let coldest = colds.chain(floors).fold(soak, f64::min) - 3.0;
     let x = Axis::temperature("oil temperature", units, Scale::LogKelvin, coldest, HOT_END_C);
@@ -64,16 +65,28 @@ pub fn viscosity(case: &Case, oils: &[(&Oil, &Assessment)], units: Units) -> Cha
     }
     chart.mark("soak", soak, degrees(units, soak));
     for (at, (oil, found)) in oils.iter().enumerate() {
-        curves(&mut chart, oil, reach(at), alone, oils.len() <= MOST_BANDS);
+        let few = oils.len() <= MOST_BANDS;
+        curves(&mut chart, oil, reach(at), few, name(oil, found, alone, few, units));
         let number = if alone { String::new() } else { format!("{}: ", at + 1) };
-        marks(&mut chart, oil, found, &number, alone, units);
+        if few {
+            marks(&mut chart, oil, found, &number, alone, units);
+        }
+        if let (None, Some(by)) = (found.start_floor.at_c, found.start_floor.set_by) {
+            chart.notes.push(format!(
+                "{}: no temperature is found from which the pump may be turned ({}).",
+                oil.name(),
+                by.id()
+            ));
+        }
         say(&mut chart, oil, found, reach(at), units);
     }
-    let measured = oils.iter().flat_map(|(oil, _)| oil.curve().points());
-    chart.draw(
-        "measured, or set by the viscosity index",
-        Shape::Points(measured.copied().collect()),
-    );
+    for (class_only, name) in
+        [(false, "measured, or set by the viscosity index"), (true, "limits of the class")]
+    {
+        let given = oils.iter().filter(|(oil, _)| oil.class_only() == class_only);
+        let points = given.flat_map(|(oil, _)| oil.curve().points());
+        chart.draw(name, Shape::Points(points.copied().collect()));
+    }
     if oils.len() > MOST_BANDS {
         chart.notes.push(format!("Likely ranges are left out with more than {MOST_BANDS} oils."));
     }
@@ -123,7 +136,7 @@ fn suction_limit(setup: &Setup<'_>, floor: Option<f64>) -> Option<(String, f64)>
 }
 
 /// The line of an oil and its likely range, from its reach up.
-fn curves(chart: &mut Chart, oil: &Oil, reach: f64, alone: bool, band: bool) {
+fn curves(chart: &mut Chart, oil: &Oil, reach: f64, band: bool, name: String) {
     let from = reach.max(chart.x.from);
     // The joints of the line stand among the points, so that every piece of it is straight.
     let mut at: Vec<f64> = oil.curve().points().iter().map(|point| point.0).collect();
@@ -145,11 +158,23 @@ fn curves(chart: &mut Chart, oil: &Oil, reach: f64, alone: bool, band: bool) {
         let range = points.iter().map(|(t, low, _, high)| (*t, *low, *high)).collect();
         chart.draw("likely range", Shape::Band(range));
     }
-    let name = if alone { "expected".to_owned() } else { format!("{}, expected", oil.name()) };
+
     chart.draw(
         name,
         Shape::Line(points.iter().map(|(t, _, expected, _)| (*t, *expected)).collect()),
     );
+}
+
+/// What an oil is called in the key. Of many oils it holds the floor too: so many lines up would be
+/// read by nobody.
+fn name(oil: &Oil, found: &Assessment, alone: bool, few: bool, units: Units) -> String {
+    match found.start_floor.at_c {
+        _ if alone => "expected".to_owned(),
+        Some(floor) if !few => {
+            format!("{}, do not turn the pump below {}", oil.name(), degrees(units, floor))
+        }
+        _ => format!("{}, expected", oil.name()),
+    }
 }
 
 fn marks(
