@@ -144,6 +144,9 @@ pub fn night(case: &Case, oil: &Oil, found: &Assessment) -> Night {
             Ok(running) => {
                 night.mixed_c = Some(running.mixed_c);
                 let points = running_points(&running, tank_c, found.work_floor.at_c);
+                if points.len() < 3 {
+                    night.remarks.push("In neutral it does not get warmer.".into());
+                }
                 night.parts.push(NightPart { kind: Stretch::Running, points });
                 night.remarks.push(
                     "After the first turn the oil of the tank is taken as mixed at once with the cold rest of the circuit.".into(),

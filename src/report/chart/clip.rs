@@ -1,6 +1,7 @@
 //! From values to places in the unit square, cut off at its sides.
 
 use super::model::Chart;
+use super::place::Area;
 
 /// A place on the chart.
 type Place = (f64, f64);
@@ -53,8 +54,40 @@ fn near(a: (f64, f64), b: (f64, f64)) -> bool {
     (a.0 - b.0).abs() < 1e-9 && (a.1 - b.1).abs() < 1e-9
 }
 
+/// A line without what lies in an area.
+pub(super) fn around(line: &[Place], area: &Area) -> Vec<Vec<Place>> {
+    let (width, height) = (area.right - area.left, area.bottom - area.top);
+    let to = |p: &Place| ((p.0 - area.left) / width, (p.1 - area.top) / height);
+    let mut out: Vec<Vec<Place>> = Vec::new();
+    let mut add = |from: Place, to: Place| match out.last_mut() {
+        Some(last) if last.last().is_some_and(|end| near(*end, from)) => last.push(to),
+        _ => out.push(vec![from, to]),
+    };
+    for (a, b) in line.iter().zip(line.iter().skip(1)) {
+        let at = |share: f64| (a.0 + share * (b.0 - a.0), a.1 + share * (b.1 - a.1));
+        match shares(to(a), to(b)) {
+            Some((enter, leave)) => {
+                if enter > 0.0 {
+                    add(*a, at(enter));
+                }
+                if leave < 1.0 {
+                    add(at(leave), *b);
+                }
+            }
+            None => add(*a, *b),
+        }
+    }
+    out
+}
+
 /// The part of a segment inside the unit square.
-fn cut(a: (f64, f64), b: (f64, f64)) -> Option<((f64, f64), (f64, f64))> {
+fn cut(a: Place, b: Place) -> Option<(Place, Place)> {
+    let at = |share: f64| (a.0 + share * (b.0 - a.0), a.1 + share * (b.1 - a.1));
+    shares(a, b).map(|(enter, leave)| (at(enter), at(leave)))
+}
+
+/// Where a segment enters the unit square and leaves it, as shares of its length.
+fn shares(a: Place, b: Place) -> Option<(f64, f64)> {
     if ![a.0, a.1, b.0, b.1].iter().all(|value| value.is_finite()) {
         return None;
     }
@@ -71,8 +104,7 @@ fn cut(a: (f64, f64), b: (f64, f64)) -> Option<((f64, f64), (f64, f64))> {
             leave = leave.min(room / step);
         }
     }
-    let at = |share: f64| (a.0 + share * dx, a.1 + share * dy);
-    (enter <= leave).then(|| (at(enter), at(leave)))
+    (enter <= leave).then_some((enter, leave))
 }
 
 #[cfg(test)]

@@ -42,7 +42,7 @@ pub fn inlet(case: &Case, oil: &Oil, found: &Assessment, units: Units) -> Result
             })
             .collect();
         let line = points.iter().map(|(t, thick, _)| (*t, *thick)).collect();
-        chart.draw("up to the expected viscosity", Shape::Band(points));
+        chart.draw("from the thick edge to the expected viscosity", Shape::Band(points));
         chart.draw(format!("at {words} speed, {}, thick edge", rpm(speed)), Shape::Line(line));
         let places = [found.soak_c, 0.0, 20.0];
         let texts: Vec<String> = places

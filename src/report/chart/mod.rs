@@ -10,6 +10,7 @@
 mod axis;
 mod clip;
 mod inlet;
+mod layout;
 mod model;
 mod overnight;
 mod place;

@@ -89,17 +89,24 @@ fn cut(word: &str, size: f64, most: f64) -> Vec<String> {
 const MOST_ROWS: usize = 8;
 
 /// The row over the chart, from 0, and the left end of each label whose line stands at `x` and whose
-/// text is so wide: the line runs up to its label and passes none. `None` where there is no such row.
-pub(super) fn over(labels: &[(f64, f64)], left: f64, right: f64) -> Vec<Option<(usize, f64)>> {
-    let mut order: Vec<usize> = (0..labels.len()).collect();
-    let x_of = |at: &usize| labels.get(*at).map_or(0.0, |label| label.0);
+/// text is so wide: the line runs up to its label and passes none. `None` where there is no such row,
+/// or no label.
+pub(super) fn over(
+    labels: &[Option<(f64, f64)>],
+    left: f64,
+    right: f64,
+) -> Vec<Option<(usize, f64)>> {
     // From the right: a label reaches to the right of its line, so that lines further left pass it.
-    order.sort_by(|a, b| x_of(b).total_cmp(&x_of(a)));
+    let mut order: Vec<(usize, f64, f64)> = labels
+        .iter()
+        .enumerate()
+        .filter_map(|(at, label)| label.map(|(x, width)| (at, x, width)))
+        .collect();
+    order.sort_by(|a, b| b.1.total_cmp(&a.1));
     let mut out = vec![None; labels.len()];
     // Row, left, right and line of what is placed.
     let mut placed: Vec<(usize, f64, f64, f64)> = Vec::new();
-    for at in order {
-        let Some((x, width)) = labels.get(at).copied() else { continue };
+    for (at, x, width) in order {
         let start = (x - 1.0).min(right - width);
         if start < left {
             continue;
@@ -171,7 +178,7 @@ mod tests {
 
     #[test]
     fn labels_over_the_chart_keep_apart() {
-        let labels: Vec<(f64, f64)> = (0..9).map(|i| (30.0 * f64::from(i), 100.0)).collect();
+        let labels: Vec<_> = (0..9).map(|i| Some((30.0 * f64::from(i), 100.0))).collect();
         let placed = over(&labels, 0.0, 400.0);
         assert!(placed.iter().filter(|place| place.is_some()).count() >= 7, "{placed:?}");
         for (i, a) in placed.iter().enumerate() {

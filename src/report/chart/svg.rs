@@ -1,26 +1,13 @@
 //! A chart as SVG, by hand: to stand alone or inside a page, in black and white.
 //!
-//! Layout from top to bottom: title, labels of the lines that run up, frame, axis, key, notes.
 //! Colours are the text's own, so that the chart follows the page it stands in.
 
-use super::axis::Axis;
-use super::clip::{inside, outline};
-use super::model::{Chart, Level, Shape};
-use super::place::{Area, Clear, Piece, lines, over, text_width};
+use super::clip::outline;
+use super::layout::{EDGE, HEIGHT, Page, ROW, SIZE, TITLE, TITLE_ROW, WIDTH};
+use super::model::{Chart, Shape};
+use super::place::{Area, lines, text_width};
 use std::fmt::Write;
 
-/// Width of the drawing.
-const WIDTH: f64 = 720.0;
-/// Height of the frame.
-const HEIGHT: f64 = 360.0;
-/// Size of all text but the title.
-const SIZE: f64 = 11.0;
-/// Size of the title.
-const TITLE: f64 = 14.0;
-/// From line to line of text.
-const ROW: f64 = 15.0;
-/// Room at the sides.
-const EDGE: f64 = 10.0;
 /// Length of the sample of a line in the key.
 const SAMPLE: f64 = 34.0;
 /// Dashes of the first line, the second, and so on; then again, with other numbers.
@@ -75,7 +62,7 @@ pub fn svg(chart: &Chart) -> String {
         esc(&chart.description()),
     );
     for (row, line) in page.title.iter().enumerate() {
-        let y = EDGE + TITLE + row as f64 * (TITLE + 4.0);
+        let y = EDGE + TITLE + row as f64 * TITLE_ROW;
         let _ = writeln!(
             out,
             "<text class=\"title\" x=\"{}\" y=\"{}\" font-size=\"{}\" font-weight=\"bold\">{}</text>",
@@ -96,82 +83,12 @@ fn n(value: f64) -> String {
     text.strip_suffix(".0").map_or(text.clone(), str::to_owned)
 }
 
-/// The places of a chart on the drawing.
-struct Page<'a> {
-    chart: &'a Chart,
-    title: Vec<String>,
-    frame: Area,
-    /// Row and left end of the label of each mark.
-    over: Vec<Option<(usize, f64)>>,
-    numbers: Vec<Option<usize>>,
-    /// All curves in pieces.
-    curves: Vec<Piece>,
-}
-
-impl<'a> Page<'a> {
-    fn new(chart: &'a Chart) -> Self {
-        let widest = chart.y.ticks.iter().map(|tick| text_width(&tick.text, SIZE));
-        let left = EDGE + SIZE + 8.0 + widest.fold(0.0, f64::max) + 8.0;
-        let last = chart.x.ticks.last().map_or(0.0, |tick| text_width(&tick.text, SIZE));
-        let right = WIDTH - EDGE - last / 2.0;
-        let title = lines(&chart.title, TITLE, WIDTH - 2.0 * EDGE);
-        let labels: Vec<(f64, f64)> = chart
-            .marks
-            .iter()
-            .filter(|mark| chart.x.holds(mark.at))
-            .map(|mark| {
-                let x = left + chart.x.place(mark.at) * (right - left);
-                (x, text_width(&mark.text(), SIZE))
-            })
-            .collect();
-        let mut found = over(&labels, EDGE, WIDTH - EDGE).into_iter();
-        let over: Vec<Option<(usize, f64)>> = chart
-            .marks
-            .iter()
-            .map(|mark| if chart.x.holds(mark.at) { found.next().flatten() } else { None })
-            .collect();
-        let rows = over.iter().flatten().map(|(row, _)| row + 1).max().unwrap_or(0);
-        let top = EDGE + title.len() as f64 * (TITLE + 4.0) + 8.0 + rows as f64 * ROW;
-        let frame = Area { left, top, right, bottom: top + HEIGHT };
-        let mut page =
-            Self { chart, title, frame, over, numbers: chart.numbers(), curves: Vec::new() };
-        page.curves = chart
-            .series
-            .iter()
-            .flat_map(|one| one.shape.paths())
-            .flat_map(|path| page.pixels(&path))
-            .flat_map(|line| line.windows(2).filter_map(pair).collect::<Vec<_>>())
-            .collect();
-        page
-    }
-
-    fn x(&self, value: f64) -> f64 {
-        self.frame.left + self.chart.x.place(value) * (self.frame.right - self.frame.left)
-    }
-
-    fn y(&self, value: f64) -> f64 {
-        self.frame.bottom - self.chart.y.place(value) * HEIGHT
-    }
-
-    /// What of a path lies in the frame.
-    fn pixels(&self, path: &[(f64, f64)]) -> Vec<Vec<(f64, f64)>> {
-        inside(self.chart, path)
-            .into_iter()
-            .map(|line| line.into_iter().map(|place| self.pixel(place)).collect())
-            .collect()
-    }
-
-    /// A place from 0 to 1 on the drawing.
-    fn pixel(&self, (x, y): (f64, f64)) -> (f64, f64) {
-        let Area { left, right, bottom, .. } = self.frame;
-        (left + x * (right - left), bottom - y * HEIGHT)
-    }
-
+impl Page<'_> {
     fn axes(&self, out: &mut String) {
         let Area { left, top, right, bottom } = self.frame;
         let chart = self.chart;
-        let x_ticks = ticks(&chart.x, |at| self.x(at), |tick| text_width(tick, SIZE) + 6.0);
-        let y_ticks = ticks(&chart.y, |at| self.y(at), |_| SIZE + 2.0);
+        let x_ticks = Self::ticks(&chart.x, |at| self.x(at), |tick| text_width(tick, SIZE) + 6.0);
+        let y_ticks = Self::ticks(&chart.y, |at| self.y(at), |_| SIZE + 2.0);
         out.push_str("<g stroke=\"currentColor\" stroke-width=\"0.7\" opacity=\"0.35\" stroke-dasharray=\"1 5\">\n");
         for (x, _) in &x_ticks {
             let _ = writeln!(out, "<path d=\"M{0} {1}V{2}\"/>", n(*x), n(top), n(bottom));
@@ -222,7 +139,7 @@ impl<'a> Page<'a> {
     }
 
     fn series(&self, out: &mut String) {
-        for (one, dash) in self.chart.series.iter().zip(dashes(self.chart)) {
+        for ((at, one), dash) in self.chart.series.iter().enumerate().zip(dashes(self.chart)) {
             match &one.shape {
                 Shape::Band(points) => self.band(out, points),
                 Shape::Points(points) => {
@@ -238,7 +155,7 @@ impl<'a> Page<'a> {
                     }
                 }
                 Shape::Line(_) | Shape::Steps(_) => {
-                    for line in one.shape.paths().iter().flat_map(|path| self.pixels(path)) {
+                    for line in self.gapped(at, &one.shape) {
                         let _ = writeln!(
                             out,
                             "<polyline class=\"line\" points=\"{}\" {}/>",
@@ -263,7 +180,7 @@ impl<'a> Page<'a> {
             "<polygon class=\"band\" points=\"{}\" fill-opacity=\"0.1\" stroke=\"none\"/>",
             points_text(&corners)
         );
-        for line in Shape::Band(points.to_vec()).paths().iter().flat_map(|path| self.pixels(path)) {
+        for line in self.paths(&Shape::Band(points.to_vec())) {
             let _ = writeln!(
                 out,
                 "<polyline class=\"edge\" points=\"{}\" fill=\"none\" stroke=\"currentColor\" stroke-width=\"0.6\"/>",
@@ -277,95 +194,46 @@ impl<'a> Page<'a> {
         let Area { left, top, right, bottom } = self.frame;
         let chart = self.chart;
         let mut key = Vec::new();
-        let mut up = Vec::new();
         for (mark, place) in chart.marks.iter().zip(&self.over) {
             if !chart.x.holds(mark.at) {
                 key.push(format!("{}: off the chart", mark.text()));
                 continue;
             }
-            let x = self.x(mark.at);
-            up.push(x);
-            let label_bottom = |row: usize| top - 4.0 - row as f64 * ROW;
-            let from = place.map_or(top, |(row, _)| label_bottom(row));
             let _ = writeln!(
                 out,
                 "<path class=\"mark\" d=\"M{} {}V{}\" stroke=\"currentColor\" stroke-width=\"0.9\" stroke-dasharray=\"4 2\"/>",
-                n(x),
-                n(from),
+                n(self.x(mark.at)),
+                n(place.map_or(top, |area| area.bottom)),
                 n(bottom)
             );
             match place {
-                Some((row, start)) => {
-                    text(out, "label", *start, label_bottom(*row) - 2.5, &mark.text());
-                }
+                Some(area) => label(out, area, &mark.text()),
                 None => key.push(format!("line up at {}: {}", mark.value, mark.words)),
             }
         }
-        let (on, off): (Vec<&Level>, Vec<&Level>) =
-            chart.limits.iter().partition(|limit| chart.y.holds(limit.at));
-        key.extend(off.iter().map(|limit| format!("{}: off the chart", limit.text())));
-        let across: Vec<f64> = on.iter().map(|limit| self.y(limit.at)).collect();
-        let clear = Clear { frame: self.frame, curves: &self.curves, across: &across, up: &up };
-        let mut taken = self.points();
-        for (limit, y) in on.iter().zip(&across) {
+        for (limit, place) in chart.limits.iter().zip(&self.across) {
+            if !chart.y.holds(limit.at) {
+                key.push(format!("{}: off the chart", limit.text()));
+                continue;
+            }
             let _ = writeln!(
                 out,
                 "<path class=\"limit\" d=\"M{} {}H{}\" stroke=\"currentColor\" stroke-width=\"0.9\"/>",
                 n(left),
-                n(*y),
+                n(self.y(limit.at)),
                 n(right)
             );
-            let size = (text_width(&limit.text(), SIZE), SIZE + 1.0);
-            let mut candidates = Vec::new();
-            for top in [y - size.1 - 1.5, y + 1.5] {
-                let mut start = right - 4.0 - size.0;
-                while start >= left + 4.0 {
-                    candidates.push((start, top));
-                    start -= 12.0;
-                }
-            }
-            match clear.best(candidates, size, &taken) {
-                Some(area) => {
-                    text(out, "label", area.left, area.bottom - 2.5, &limit.text());
-                    taken.push(area);
-                }
+            match place {
+                Some(area) => label(out, area, &limit.text()),
                 None => key.push(format!("line across at {}: {}", limit.value, limit.words)),
             }
         }
-        for (one, number) in chart.series.iter().zip(&self.numbers) {
-            let Some(number) = number.map(|number| number.to_string()) else { continue };
-            let size = (text_width(&number, SIZE), SIZE + 1.0);
-            let lines: Vec<Vec<(f64, f64)>> =
-                one.shape.paths().iter().flat_map(|path| self.pixels(path)).collect();
-            let around = [
-                (3.0, -size.1 - 1.0),
-                (-size.0 - 5.0, -size.1 / 2.0),
-                (-size.0 - 3.0, 1.0),
-                (-size.0 / 2.0, -size.1 - 3.0),
-            ];
-            let candidates = lines
-                .iter()
-                .flatten()
-                .flat_map(|(x, y)| around.iter().map(move |(dx, dy)| (x + dx, y + dy)));
-            if let Some(area) = clear.best(candidates, size, &taken) {
-                text(out, "label", area.left, area.bottom - 2.5, &number);
-                taken.push(area);
+        for (number, place) in self.numbers.iter().zip(&self.tags) {
+            if let Some((number, area)) = number.zip(*place) {
+                label(out, &area, &number.to_string());
             }
         }
         key
-    }
-
-    /// The room that single points take.
-    fn points(&self) -> Vec<Area> {
-        let points = self.chart.series.iter().filter_map(|one| match &one.shape {
-            Shape::Points(points) => Some(points),
-            _ => None,
-        });
-        points
-            .flatten()
-            .map(|(x, y)| (self.x(*x), self.y(*y)))
-            .map(|(x, y)| Area { left: x - 6.0, top: y - 6.0, right: x + 6.0, bottom: y + 6.0 })
-            .collect()
     }
 
     /// The key and the notes; returns how far down they reach.
@@ -407,13 +275,6 @@ impl<'a> Page<'a> {
     }
 }
 
-fn pair(two: &[(f64, f64)]) -> Option<Piece> {
-    match two {
-        [a, b] => Some((*a, *b)),
-        _ => None,
-    }
-}
-
 /// Dashes of every series; those that are no line have none.
 fn dashes(chart: &Chart) -> Vec<&'static str> {
     let mut next = 0;
@@ -446,6 +307,11 @@ fn text(out: &mut String, class: &str, x: f64, y: f64, text: &str) {
         writeln!(out, "<text class=\"{class}\" x=\"{}\" y=\"{}\">{}</text>", n(x), n(y), esc(text));
 }
 
+/// A text in the place found for it.
+fn label(out: &mut String, area: &Area, words: &str) {
+    text(out, "label", area.left, area.bottom - 2.5, words);
+}
+
 /// A sample of a series, for the key.
 fn sample(out: &mut String, shape: &Shape, x: f64, y: f64, dash: &str) {
     let end = n(x + SAMPLE);
@@ -467,19 +333,6 @@ fn sample(out: &mut String, shape: &Shape, x: f64, y: f64, dash: &str) {
             n(y)
         ),
     };
-}
-
-/// Ticks that have room beside each other: (place, text). `needs` is the room of a text.
-fn ticks(axis: &Axis, place: impl Fn(f64) -> f64, needs: impl Fn(&str) -> f64) -> Vec<(f64, &str)> {
-    let mut out: Vec<(f64, &str)> = Vec::new();
-    for tick in &axis.ticks {
-        let at = place(tick.at);
-        let room = needs(&tick.text);
-        if out.last().is_none_or(|(last, _)| (at - last).abs() >= room) {
-            out.push((at, &tick.text));
-        }
-    }
-    out
 }
 
 #[cfg(test)]

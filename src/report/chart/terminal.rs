@@ -427,10 +427,11 @@ impl Grid {
     }
 }
 
-/// The character for a number: 1 to 9, then small letters; more than 34 lines share the last.
+/// The character for a number: 1 to 9, then small letters but for the `o` of a point; more lines than
+/// that share the last.
 fn digit(number: usize) -> char {
-    let digit = u32::try_from(number.min(35)).ok().and_then(|number| char::from_digit(number, 36));
-    digit.unwrap_or('z')
+    let tags = "123456789abcdefghijklmnpqrstuvwxyz";
+    tags.chars().nth(number.saturating_sub(1)).unwrap_or('z')
 }
 
 /// The cell out of `count` that a place from 0 to 1 falls in.
