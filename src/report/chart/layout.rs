@@ -46,7 +46,8 @@ impl<'a> Page<'a> {
         let left = EDGE + SIZE + 8.0 + widest.fold(0.0, f64::max) + 8.0;
         let last = chart.x.ticks.last().map_or(0.0, |tick| text_width(&tick.text, SIZE));
         let right = WIDTH - EDGE - last / 2.0;
-        let title = lines(&chart.title, TITLE, WIDTH - 2.0 * EDGE);
+        // Bold letters are wider.
+        let title = lines(&chart.title, 1.12 * TITLE, WIDTH - 2.0 * EDGE);
         let labels: Vec<Option<(f64, f64)>> = chart
             .marks
             .iter()

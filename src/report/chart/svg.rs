@@ -228,10 +228,16 @@ impl Page<'_> {
                 None => key.push(format!("line across at {}: {}", limit.value, limit.words)),
             }
         }
+        let mut crowded = Vec::new();
         for (number, place) in self.numbers.iter().zip(&self.tags) {
-            if let Some((number, area)) = number.zip(*place) {
-                label(out, &area, &number.to_string());
+            match (number, place) {
+                (Some(number), Some(area)) => label(out, area, &number.to_string()),
+                (Some(number), None) => crowded.push(number.to_string()),
+                (None, _) => {}
             }
+        }
+        if !crowded.is_empty() {
+            key.push(format!("No room for the numbers of {}.", crowded.join(", ")));
         }
         key
     }
