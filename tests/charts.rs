@@ -3,6 +3,8 @@
 //!
 //! What a chart shows is read back from the drawing itself, by its own ticks.
 
+#![cfg(feature = "cli")]
+
 use coldsump::advice::{self, Assessment, LimitId, Outcome};
 use coldsump::case::{Case, CaseFile, Units};
 use coldsump::heat::{HeatCapacity, LossCurve, TankLoss, WarmUp};
@@ -745,7 +747,7 @@ fn names_of_a_case_do_no_harm() {
 }
 
 proptest! {
-    #![proptest_config(ProptestConfig::with_cases(64))]
+    #![proptest_config(ProptestConfig { cases: 64, failure_persistence: None, ..ProptestConfig::default() })]
     #[test]
     fn any_words_make_a_sound_chart(title in any::<String>(), name in any::<String>(), words in any::<String>(), columns in 0_usize..100, rows in 0_usize..30) {
         thread_local!(static CHART: Chart = {

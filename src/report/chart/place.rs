@@ -196,7 +196,7 @@ mod tests {
         for line in lines(text, 10.0, 100.0) {
             assert!(text_width(&line, 10.0) <= 100.0, "{line}");
         }
-        assert_eq!(lines(text, 10.0, 100.0).concat(), text.replace(' ', ""));
+        assert_eq!(lines(text, 10.0, 100.0).concat().replace(' ', ""), text.replace(' ', ""));
     }
 
     #[test]
