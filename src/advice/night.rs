@@ -144,7 +144,7 @@ pub fn night(case: &Case, oil: &Oil, found: &Assessment) -> Night {
             Ok(running) => {
                 night.mixed_c = Some(running.mixed_c);
                 let points = running_points(&running, tank_c, found.work_floor.at_c);
-                if points.len() < 3 {
+                if points.len() < 3 && found.circulation.why.is_none() {
                     night.remarks.push("In neutral it does not get warmer.".into());
                 }
                 night.parts.push(NightPart { kind: Stretch::Running, points });

@@ -46,8 +46,7 @@ impl<'a> Page<'a> {
         let left = EDGE + SIZE + 8.0 + widest.fold(0.0, f64::max) + 8.0;
         let last = chart.x.ticks.last().map_or(0.0, |tick| text_width(&tick.text, SIZE));
         let right = WIDTH - EDGE - last / 2.0;
-        // Bold letters are wider.
-        let title = lines(&chart.title, 1.12 * TITLE, WIDTH - 2.0 * EDGE);
+        let title = lines(&chart.title, TITLE, WIDTH - 2.0 * EDGE);
         let labels: Vec<Option<(f64, f64)>> = chart
             .marks
             .iter()
@@ -166,7 +165,7 @@ impl<'a> Page<'a> {
             labels.push(place);
         }
         let mut tags = Vec::new();
-        for ((at, one), number) in chart.series.iter().enumerate().zip(&self.numbers) {
+        for (at, number) in self.numbers.iter().enumerate() {
             let size =
                 (text_width(&number.map_or(String::new(), |n| n.to_string()), SIZE), SIZE + 1.0);
             // Not on another line; the edge of a range does not matter.
@@ -178,13 +177,14 @@ impl<'a> Page<'a> {
                 .copied()
                 .collect();
             let clear = Clear { frame, curves: &others, across: &across, up: &up };
-            let candidates: Vec<(f64, f64)> = self
-                .paths(&one.shape)
+            // In the middle of each piece, from the cold end; that end itself stays, to be seen.
+            let middle = |(a, b): &Piece| (f64::midpoint(a.0, b.0), f64::midpoint(a.1, b.1));
+            let own = curves.get(at).map_or(&[][..], |(_, pieces)| pieces);
+            let candidates = own
                 .iter()
-                .flatten()
-                .skip(1)
-                .map(|(x, y)| (x - size.0 / 2.0, y - size.1 / 2.0))
-                .collect();
+                .skip(usize::from(own.len() > 1))
+                .map(middle)
+                .map(|(x, y)| (x - size.0 / 2.0, y - size.1 / 2.0));
             let place = number.and_then(|_| clear.best(candidates, size, &taken));
             taken.extend(place);
             tags.push(place);

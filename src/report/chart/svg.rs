@@ -237,7 +237,7 @@ impl Page<'_> {
             }
         }
         if !crowded.is_empty() {
-            key.push(format!("No room for the numbers of {}.", crowded.join(", ")));
+            key.push(format!("Too close together for a number on them: {}.", crowded.join(", ")));
         }
         key
     }
