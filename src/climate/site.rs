@@ -119,6 +119,16 @@ pub struct Below {
     pub mornings: Option<f64>,
 }
 
+/// The coldest mean over so many hours in a row.
+#[derive(Debug, Clone, Copy, PartialEq, Deserialize, Serialize)]
+#[serde(deny_unknown_fields)]
+pub struct Spell {
+    /// Hours.
+    pub hours: f64,
+    /// Mean, °C.
+    pub celsius: f64,
+}
+
 /// The coldest of one winter.
 #[derive(Debug, Clone, Copy, PartialEq, Deserialize, Serialize)]
 #[serde(deny_unknown_fields)]
@@ -185,6 +195,9 @@ pub struct Site {
     /// How often it is colder, warmest threshold first.
     #[serde(default, skip_serializing_if = "Vec::is_empty")]
     pub below: Vec<Below>,
+    /// The coldest means over hours in a row.
+    #[serde(default, skip_serializing_if = "Vec::is_empty")]
+    pub spell: Vec<Spell>,
     /// The coldest of each winter on record.
     #[serde(default, skip_serializing_if = "Vec::is_empty")]
     pub winter: Vec<WinterMinimum>,
