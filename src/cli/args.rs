@@ -134,6 +134,9 @@ pub(crate) struct ClimateShowArgs {
     /// A design class, a built-in site, or a climate file
     #[arg(value_name = "NAME")]
     pub(crate) name: String,
+    /// A case whose minimum and start floors are marked in the chart
+    #[arg(long, value_name = "CASE")]
+    pub(crate) case: Option<std::path::PathBuf>,
     /// Units to show
     #[arg(long, value_enum)]
     pub(crate) units: Option<UnitsArg>,

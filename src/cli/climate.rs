@@ -1,6 +1,7 @@
 //! `coldsump climate`, and the climate files a case may name.
 
 use super::args::{ClimateCommand, ClimateFromArgs, LookArgs, UnitArg};
+use super::assess::Trouble;
 use super::{DONE, WRONG, output};
 use anyhow::{Context, Result};
 use coldsump::climate::records::{Import, Options, Unit};
@@ -61,7 +62,16 @@ pub(crate) fn run(command: &ClimateCommand, look: &LookArgs) -> Result<u8> {
             match sites.site(&args.name) {
                 Ok(Some(site)) => {
                     let units = output::units(args.units).unwrap_or_default();
-                    let document = report::climate(&site, units);
+                    let marks = match args.case.as_deref().map(marks) {
+                        None => Vec::new(),
+                        Some(Ok(marks)) => marks,
+                        Some(Err(Trouble::Wrong(message))) => {
+                            eprintln!("{message}");
+                            return Ok(WRONG);
+                        }
+                        Some(Err(Trouble::Io(error))) => return Err(error),
+                    };
+                    let document = report::climate(&site, &marks, units);
                     output::put(&report::text(&document, output::look(look)))?;
                     Ok(DONE)
                 }
@@ -79,6 +89,17 @@ pub(crate) fn run(command: &ClimateCommand, look: &LookArgs) -> Result<u8> {
             }
         }
     }
+}
+
+/// What of a case is marked: its minimum, and the start floors of its oils.
+fn marks(path: &Path) -> Result<Vec<(String, f64)>, Trouble> {
+    let case = super::advise::case(path, &[], &[])?;
+    let decision = coldsump::advice::decide(&case);
+    let mut marks = vec![("minimum".to_owned(), case.site.minimum.as_celsius())];
+    marks.extend(case.oils.iter().zip(&decision.oils).filter_map(|(oil, found)| {
+        Some((oil.name().chars().take(9).collect(), found.start_floor.at_c?))
+    }));
+    Ok(marks)
 }
 
 /// The built-in sites, and those in `climates/` here.

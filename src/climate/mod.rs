@@ -7,11 +7,13 @@ mod built_in;
 pub mod extremes;
 pub mod months;
 pub mod records;
+mod regime;
 mod site;
 pub mod tally;
 mod wish;
 
 pub use built_in::{BuiltIn, Sites};
+pub use regime::Regime;
 pub use site::{
     Below, ColdDay, Kind, Minima, Monthly, OnceIn, Place, Reading, Site, SiteError, Spell, Wind,
     WinterMinimum,

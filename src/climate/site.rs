@@ -361,6 +361,10 @@ impl Site {
         let mut rows: Vec<(f64, f64)> =
             self.below.iter().filter_map(|below| Some((below.celsius, of(below)?))).collect();
         rows.sort_by(|a, b| a.0.total_cmp(&b.0));
+        // Under a threshold that nothing is under there is nothing either.
+        if rows.first().is_some_and(|(at, count)| celsius < *at && *count == 0.0) {
+            return Some(0.0);
+        }
         let above = rows.iter().position(|(at, _)| *at >= celsius)?;
         let (to, count) = *rows.get(above)?;
         if (to - celsius).abs() < 1e-9 {

@@ -424,13 +424,13 @@ impl Gathered {
         })
     }
 
-    /// Thresholds every 5 K from 0 °C down to the coldest.
+    /// Thresholds every 5 K from 20 °C down to the coldest.
     fn thresholds(&self, hourly: bool) -> Vec<Below> {
         let total = self.bins().total() as f64;
         let round = |value: f64| (value * 10.0).round() / 10.0;
         let mut rows = Vec::new();
-        for step in 0..=16 {
-            let celsius = 0.0 - 5.0 * f64::from(step);
+        for step in 0..=20 {
+            let celsius = 20.0 - 5.0 * f64::from(step);
             let count = self.below(celsius) as f64;
             let hours = hourly.then(|| round(count * 8760.0 / total));
             let mornings = if hourly {
