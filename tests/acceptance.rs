@@ -456,3 +456,94 @@ fn case_15_ester_hoses_and_the_hose_stop() {
         assert!(!has_caution(&advised("-39 °C", &[oil], &[]), "hose-rating"));
     }
 }
+
+// Traps that once gave a figure nobody should bet a pump on.
+
+#[test]
+fn full_load_is_never_released_colder_than_light_work() {
+    for elevation in ["0 m", "1500 m", "2000 m", "2200 m", "2500 m", "3500 m"] {
+        for bore in ["38.1 mm", "50.8 mm", "76.2 mm"] {
+            let sets: &[(&str, &str)] = &[
+                ("site.elevation", elevation),
+                ("suction.bore", bore),
+                ("pump.inlet_pressure_work_min", "none"),
+            ];
+            let found = found("-30 °C", &[PAO22, sets]);
+            if let (Some(light), Some(work)) = (found.light_floor.at_c, found.work_floor.at_c) {
+                assert!(work >= light, "{elevation}, {bore}: full {work}, light {light}");
+            }
+        }
+    }
+}
+
+#[test]
+fn what_the_label_says_beside_a_class_counts() {
+    let class: &[(&str, &str)] = &[("oil.class", "HM 46"), ("oil.pour_point", "0 °C")];
+    let found = found("-14 °C", &[class]);
+    assert_eq!(found.limits[0].outcome.temperature(), Some(10.0));
+    let better: &[(&str, &str)] = &[
+        ("oil.class", "HM 46"),
+        ("oil.pour_point", "-40 °C"),
+        ("oil.flash_point", "150 °C"),
+        ("oil.density", "890 kg/m³"),
+    ];
+    let case = case("-14 °C", &[better]);
+    let oil = &case.oils[0];
+    assert_eq!(oil.pour_point().map(|t| t.as_celsius()), Some(-40.0));
+    assert_eq!(oil.flash_point().map(|t| t.as_celsius()), Some(150.0));
+    assert_eq!(oil.bulk().density_15(), 890.0);
+}
+
+#[test]
+fn a_fitted_element_of_unknown_surface_was_not_checked() {
+    let sets: &[(&str, &str)] = &[("element.power", "500 W")];
+    let heating = found("-30 °C", &[PAO22, sets]).heating;
+    let fitted = heating.fitted.unwrap();
+    assert_eq!(fitted.status, HeatingStatus::NotChecked);
+    assert!(fitted.whys.contains(&advice::HeatingWhy::SurfaceUnknown));
+    assert_eq!((heating.watt_density, heating.surface_cm2), (None, None));
+}
+
+#[test]
+fn no_element_on_more_than_its_voltage() {
+    for power in [None, Some(("element.power", "500 W"))] {
+        let mut sets = vec![("element.rated_voltage", "120 V"), ("element.surface", "2000 cm²")];
+        sets.extend(power);
+        if power.is_none() {
+            sets.pop();
+        }
+        let heating = found("-30 °C", &[PAO22, &sets]).heating;
+        assert_eq!(heating.status, HeatingStatus::CannotReach);
+        assert!(heating.whys.contains(&advice::HeatingWhy::OverVoltage), "{:?}", heating.whys);
+    }
+}
+
+#[test]
+fn parked_heat_is_no_heat_after_a_weekend_and_none_in_the_pump() {
+    let parked: &[(&str, &str)] = &[
+        ("duty.credit_parked_heat", "true"),
+        ("duty.parked_at", "18:00"),
+        ("duty.parked_oil", "50 °C"),
+        ("reservoir.insulation.thickness", "25 mm"),
+    ];
+    let warm = found("-30 °C", &[HV22, parked]);
+    let difference = warm.first_turn.pump_difference_k.unwrap();
+    assert!((difference - (warm.tank_soak_c + 30.0)).abs() < 1e-9, "{difference}");
+    assert!(warm.heating.pump_warming);
+    let weekend: &[(&str, &str)] = &[("duty.standing", "60 h")];
+    let cold = found("-30 °C", &[HV22, parked, weekend]);
+    assert!((cold.tank_soak_c + 30.0).abs() < 1e-9, "{}", cold.tank_soak_c);
+}
+
+#[test]
+fn a_tank_as_cold_as_the_pump_is_no_warm_tank() {
+    let advice = advised("-27 °C", &[PAO22], &[("site.heating_temperature", "-22 °C")]);
+    let found = &advice.decision.oils[0];
+    if found.heating.status == HeatingStatus::NotNeeded && found.verdict.id() == "needs-heat" {
+        assert!(!plan_of(&advice, PlanKind::StartWarmTank, 0).allowed);
+        let ids: Vec<&str> = advice.levers.iter().map(|lever| lever.id).collect();
+        assert!(ids.contains(&"size-for-the-minimum"), "{ids:?}");
+    } else {
+        panic!("the case no longer is the trap: {:?}", found.verdict);
+    }
+}

@@ -285,6 +285,7 @@ fn the_shift_an_hour_later_moves_the_clock_and_nothing_else() {
             || (pointer.starts_with("/procedure/") && pointer.ends_with("/do"))
             // Parked as before, it stands and is held for an hour longer.
             || hold_plan(&before, pointer)
+            || pointer == "/choice/timing/hold_kwh"
             || lever_of(&before, pointer, "more-time");
         assert!(clock, "{pointer} moved with the clock");
     }

@@ -161,7 +161,7 @@ fn one_message_a_fault() {
         ),
         (
             instead("\"-30 °C\"", "\"record\"\nclimate = \"nowhere\""),
-            "case.toml:4:11: site.climate: no climate `nowhere` is known; name a climate file, or one of C0, C1, C2, C3, C4, skarn-ridge, hollow-pit, north-bench, tarn-landing",
+            "case.toml:4:11: site.climate: no climate `nowhere` is known; name a climate file, or one of C0, C1, C2, C3, C4, valdez-coast, northway-interior, skarn-ridge, hollow-pit, north-bench, tarn-landing",
         ),
         (
             instead("\"4 h\"", "\"0 h\""),

@@ -649,7 +649,7 @@ fn the_night_is_drawn_by_the_clock() {
     let cooled = night.parts[0].points.windows(2).all(|two| two[1].1 < two[0].1);
     let heated = night.parts[1].points.windows(2).all(|two| two[1].1 > two[0].1);
     assert!(cooled && heated);
-    for gate in ["first turn from", "light work from", "full load from", "air -30.0 °C"] {
+    for gate in ["first turn from", "light work from", "full load from", "coldest air -30.0 °C"] {
         assert!(chart.description().contains(gate), "{gate}");
     }
 }

@@ -395,3 +395,63 @@ fn text_of_a_case_brings_no_terminal_escapes() {
         assert!(text(&output.stdout).contains("31mb"));
     }
 }
+
+#[test]
+fn climates_are_listed_shown_and_made() {
+    let out = text(&run(&["climate", "list"]).stdout);
+    for name in ["C0", "C4", "valdez-coast", "northway-interior", "skarn-ridge"] {
+        assert!(out.contains(name), "{out}");
+    }
+    let out = text(&run(&["climate", "show", "C2"]).stdout);
+    assert!(out.contains("06:00 -46.0 °C") && out.contains("AR 70-38"), "{out}");
+    let shown = run(&["climate", "show", "valdez-coast", "--case", "examples/mild-grader.toml"]);
+    let out = text(&shown.stdout);
+    assert!(out.contains("Winter minima against chance") && out.contains("minimum"), "{out}");
+    let missing = run(&["climate", "show", "nowhere"]);
+    assert_eq!(missing.status.code(), Some(2));
+    assert_eq!(
+        text(&missing.stderr),
+        "no climate `nowhere` is at hand\n\ntry: coldsump climate list\n"
+    );
+
+    let folder = std::env::temp_dir().join(format!("coldsump-climate-{}", std::process::id()));
+    std::fs::create_dir_all(&folder).unwrap();
+    let target = folder.join("valdez.toml");
+    let record = "tests/climate/valdez_wso_tmin_daily_1941_1970.csv";
+    let made = run(&["climate", "from", record, "-o", target.to_str().unwrap()]);
+    assert_eq!(made.status.code(), Some(0), "{}", text(&made.stderr));
+    assert!(made.stdout.is_empty());
+    let said = text(&made.stderr);
+    assert!(said.contains("read as CSV with date and tmin"), "{said}");
+    assert!(said.contains("10176 temperatures used") && said.contains("mind: "), "{said}");
+    // A case beside the folder names the file.
+    let climate = format!("site.climate={}", target.display());
+    let advised = run(&[
+        "advise",
+        LOADER,
+        "--set",
+        &climate,
+        "--set",
+        "site.minimum_temperature=once in 20 winters",
+        "--set",
+        "site.heating_temperature=none",
+        "--format",
+        "json",
+    ]);
+    let value = json(&advised);
+    assert_eq!(value["site"]["minimum_how"], "return-level");
+    assert_eq!(value["site"]["minimum_c"], -31.31);
+    assert_eq!(value["site"]["heating_how"], "percentile");
+    let chance = value["cold"]["chance_a_winter"].as_f64().unwrap();
+    assert!((chance - 0.05).abs() < 1e-4, "{chance}");
+    assert_eq!(value["cold"]["against"].as_array().unwrap().len(), 8);
+    // Damaged: one message, nothing written.
+    let broken = folder.join("broken.csv");
+    std::fs::write(&broken, "date,tmin\n2020-01-02,-5\n2020-01-01,-6\n").unwrap();
+    let other = folder.join("other.toml");
+    let made = run(&["climate", "from", broken.to_str().unwrap(), "-o", other.to_str().unwrap()]);
+    assert_eq!(made.status.code(), Some(2));
+    assert!(text(&made.stderr).contains("sort the file by date"));
+    assert!(!other.exists());
+    std::fs::remove_dir_all(&folder).unwrap();
+}

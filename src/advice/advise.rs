@@ -3,6 +3,7 @@
 use super::ask_for::{self, AskFor};
 use super::assumptions::{self, Confirm};
 use super::cautions::{self, Caution};
+use super::cold::{self, Cold};
 use super::decide::{Decision, decide};
 use super::evidence::{self, Evidence};
 use super::levers::{self, Lever};
@@ -14,6 +15,8 @@ use crate::case::Case;
 pub struct Advice {
     /// Every oil, all plans, the choice.
     pub decision: Decision,
+    /// How cold the case is, as a risk; the winter ahead.
+    pub cold: Cold,
     /// The oil to ask a supplier for.
     pub ask_for: AskFor,
     /// The steps, in order.
@@ -50,6 +53,7 @@ pub struct Advice {
 #[must_use]
 pub fn advise(case: &Case) -> Advice {
     let decision = decide(case);
+    let cold = cold::cold(case, &decision);
     let ask_for = ask_for::ask_for(case);
     let (mut procedure, cautions) = match Scene::new(case, &decision, &ask_for) {
         Some(scene) => (procedure::procedure(&scene), cautions::cautions(&scene)),
@@ -62,5 +66,15 @@ pub fn advise(case: &Case) -> Advice {
     let confirm = assumptions::confirm(case, &decision);
     let levers = levers::levers(case, &decision);
     let evidence = evidence::evidence(case, &decision);
-    Advice { decision, ask_for, procedure, cautions, confirm, levers, evidence, record: RECORD }
+    Advice {
+        decision,
+        cold,
+        ask_for,
+        procedure,
+        cautions,
+        confirm,
+        levers,
+        evidence,
+        record: RECORD,
+    }
 }

@@ -1,7 +1,7 @@
 //! The first tier: one oil in one case.
 
 use super::first_turn::{self, Circulation, FirstTurn};
-use super::heating::{self, Heating, HeatingStatus, Tank};
+use super::heating::{self, Heating, HeatingStatus, HeatingWhy, Tank};
 use super::limits::{Edge, LIMITS, LimitId, Outcome, Side, Why};
 use super::say::{Figure, Fill, Reason};
 use super::setup::Setup;
@@ -154,7 +154,9 @@ pub fn assess(case: &Case, oil: &Oil) -> Assessment {
     let light = |result: &LimitResult| {
         start(result.side) || result.side == Side::Light || result.id == LimitId::ViscosityWork
     };
-    let work = |side| matches!(side, Side::Start | Side::Work);
+    // Full load asks for no less than light work: where the inlet at work speed was not checked, what
+    // light work needs still counts.
+    let work = |side| matches!(side, Side::Start | Side::Light | Side::Work);
     let start_floor = floor(&limits, |r| start(r.side), |r| r.outcome);
     let light_floor = floor(&limits, light, |r| r.outcome);
     let work_floor = floor(&limits, |r| work(r.side), |r| r.outcome);
@@ -164,7 +166,11 @@ pub fn assess(case: &Case, oil: &Oil) -> Assessment {
     let tank = Tank::new(&setup);
     let heating = heating::heating(&setup, &tank, start_floor.at_c, gels);
     let gate = start_floor.at_c.map(|floor| floor + case.policy.heat.gate_margin_k);
-    let first_turn = first_turn::first_turn(&setup, gate, work_floor.at_c, heating.thermostat_c);
+    // The hottest oil that can meet the cold pump: at the thermostat, or what the tank kept.
+    let hottest = heating
+        .thermostat_c
+        .or_else(|| heating.whys.contains(&HeatingWhy::WarmEnough).then_some(tank.soak_c));
+    let first_turn = first_turn::first_turn(&setup, gate, work_floor.at_c, hottest);
     // Heat that cannot be brought in is not counted on.
     let reached = heating.mean_target_c.filter(|_| heating.status != HeatingStatus::CannotReach);
     let tank_c = reached.unwrap_or(tank.soak_c);

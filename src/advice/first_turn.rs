@@ -13,7 +13,8 @@ pub struct FirstTurn {
     pub hose_clearing_s: Option<f64>,
     /// Share of its flow the pump gets at first; 1 and more is full.
     pub hose_fill: Option<f64>,
-    /// Thermostat over the pump body at the soak, K; 0 where nothing is heated.
+    /// Thermostat, or what a parked tank kept, over the pump body at the soak, K; 0 where nothing is
+    /// warmer than the pump.
     pub pump_difference_k: Option<f64>,
     /// Vacuum at the pump at the gate and start speed, kPa under the local air.
     pub vacuum_at_gate_kpa: Option<f64>,
@@ -47,16 +48,16 @@ pub struct Circulation {
     pub why: Option<&'static str>,
 }
 
-/// The first turn at the gate, °C, with the thermostat at a temperature.
+/// The first turn at the gate, °C, with the hottest oil that can meet the pump, °C.
 pub(super) fn first_turn(
     setup: &Setup<'_>,
     gate: Option<f64>,
     work_floor: Option<f64>,
-    thermostat: Option<f64>,
+    hottest: Option<f64>,
 ) -> FirstTurn {
     let pump = &setup.case.pump;
     let mut turn = FirstTurn {
-        pump_difference_k: Some(thermostat.map_or(0.0, |thermostat| thermostat - setup.soak_c)),
+        pump_difference_k: Some(hottest.map_or(0.0, |hottest| hottest - setup.soak_c)),
         ..FirstTurn::default()
     };
     let high = setup.oil.estimate(setup.soak_c).high;

@@ -55,6 +55,8 @@ pub enum HeatingWhy {
     BelowPour,
     CircuitTooSmall,
     WattDensity,
+    OverVoltage,
+    SurfaceUnknown,
 }
 
 impl HeatingWhy {
@@ -76,6 +78,8 @@ impl HeatingWhy {
             Self::BelowPour => "below-pour",
             Self::CircuitTooSmall => "circuit-too-small",
             Self::WattDensity => "watt-density",
+            Self::OverVoltage => "over-voltage",
+            Self::SurfaceUnknown => "surface-unknown",
         }
     }
 
@@ -101,6 +105,12 @@ impl HeatingWhy {
             Self::SkinTooHot => "no watt density keeps the skin under its limits in this oil",
             Self::CircuitTooSmall => "the circuit does not carry it",
             Self::WattDensity => "its watt density is over what this oil stands",
+            Self::OverVoltage => {
+                "the supply is more than 10 % over the voltage the element is rated at: it burns out"
+            }
+            Self::SurfaceUnknown => {
+                "its heated surface is not given, so its watt density was not checked (element.surface)"
+            }
         }
     }
 }
@@ -251,26 +261,63 @@ impl<'a> Tank<'a> {
         let curve = LossCurve::new(&loss, top);
         let mut tank = Self { capacity, rest, loss, curve, soak_c: setup.air_c };
         if let (Some(oil), Some(at)) = (parked, case.duty.parked_at) {
-            let hours = at.hours_until(case.duty.shift_start);
-            let factor = parked_loss_factor(case);
-            let air = setup.air_c;
+            // After a weekend nothing is left of the warmth: over 24 h the standstill counts.
+            let standing = case.duty.standing.as_hours();
+            let hours = if standing > heat::LONGEST_CREDIT_H {
+                standing
+            } else {
+                at.hours_until(case.duty.shift_start)
+            };
+            let (factor, night) = tank.parked_night(case, oil.as_celsius());
+            let from = at.hours();
             let cooled = heat::parked_c(
                 &tank.curve,
                 &tank.capacity,
                 oil.as_celsius(),
                 hours,
                 factor,
-                |_| air,
+                |hour| night(from + hour),
             );
             tank.soak_c = cooled.max(setup.air_c);
         }
         tank
     }
+
+    /// What a tank parked at a temperature cools by: the factor on its loss, nothing where that was
+    /// measured, and the air by hours after midnight.
+    pub(super) fn parked_night(
+        &self,
+        case: &Case,
+        parked_c: f64,
+    ) -> (f64, impl Fn(f64) -> f64 + use<>) {
+        let measured = case.reservoir.cooldown.is_some();
+        let factor = if measured { 1.0 } else { case.policy.heat.loss_uncertainty };
+        // A tank that stands longer than its time constant follows the spell, not the day.
+        let coldest_c = self.curve.air_c();
+        let middle = f64::midpoint(parked_c, coldest_c);
+        let ua = factor * self.curve.ua(middle);
+        let time_constant_h = self.capacity.at(middle) / ua / 3600.0;
+        let lags = case.duty.standing.as_hours() <= time_constant_h;
+        (factor, night_air(case, coldest_c, lags))
+    }
 }
 
-/// What the loss of a parked tank is multiplied by: nothing where it was measured.
-pub(super) fn parked_loss_factor(case: &Case) -> f64 {
-    if case.reservoir.cooldown.is_some() { 1.0 } else { case.policy.heat.loss_uncertainty }
+/// Air by hours after midnight: the site's cold day with its coldest hour at `coldest_c`; that
+/// temperature all the time where no cold day is known, or the tank does not lag behind it.
+pub(super) fn night_air(case: &Case, coldest_c: f64, lags: bool) -> impl Fn(f64) -> f64 + use<> {
+    let day = case.site.climate.as_ref().filter(|_| lags).and_then(|site| site.cold_day.as_ref());
+    // Two days on end, from midnight: the first value of a cold day is that of 01:00.
+    let hours: Vec<f64> = day.map_or_else(
+        || vec![coldest_c],
+        |day| {
+            let lowest = day.hours_c.iter().copied().fold(f64::INFINITY, f64::min);
+            (0..=48)
+                .filter_map(|hour| day.hours_c.get((hour + 23) % 24))
+                .map(|celsius| celsius - lowest + coldest_c)
+                .collect()
+        },
+    );
+    move |hour| heat::hourly(&hours).map_or(coldest_c, |air| air(hour))
 }
 
 /// Heating of one oil towards its start floor, °C; `gels` where it does not flow in the lines.
@@ -289,7 +336,13 @@ pub(super) fn heating(
     let gate = floor + policy.gate_margin_k;
     if gate <= tank.soak_c {
         let why = if setup.soak_c < gate { HeatingWhy::WarmEnough } else { HeatingWhy::StartsCold };
-        return Heating::without(HeatingStatus::NotNeeded, why);
+        let mut heating = Heating::without(HeatingStatus::NotNeeded, why);
+        // A tank that kept its warmth is as far over the pump as a heated one.
+        heating.pump_warming = !case.machine.pump_heated
+            && why == HeatingWhy::WarmEnough
+            && (tank.soak_c > floor + policy.warming_over_floor_k
+                || tank.soak_c > setup.soak_c + policy.warming_over_soak_k);
+        return heating;
     }
     let target = heat::mean_target_c(
         floor,
@@ -381,8 +434,11 @@ pub(super) fn heating(
         );
     }
 
+    if delivered > MOST_DELIVERED {
+        fails.push(HeatingWhy::OverVoltage);
+    }
     let mut size = None;
-    let mut fitted_density = None;
+    let mut used_density = Some(density_max);
     if let Some(power) = element.power {
         let power = power.as_watts();
         let into_oil = power * delivered * share;
@@ -393,11 +449,11 @@ pub(super) fn heating(
             into_oil,
             seconds,
             carried < power * delivered,
-            density.is_some_and(|density| density > density_max),
+            density.map(|density| density > density_max),
         );
-        if fitted.status == HeatingStatus::Sized {
+        if matches!(fitted.status, HeatingStatus::Sized | HeatingStatus::NotChecked) {
             heating.tight = power * delivered < needed_high;
-            fitted_density = density;
+            used_density = density;
             size = Some(vec![power]);
         }
         heating.fitted = Some(fitted);
@@ -440,10 +496,9 @@ pub(super) fn heating(
         heating.energy_kwh = heating.time_s.map(|time| power * time / 3.6e6);
         heating.steady_c = heat::steady_c(&tank.curve, &tank.loss, power * share);
         heating.current_a = supply.map(|circuit| circuit.current_a(power));
-        let density = fitted_density.unwrap_or(density_max);
-        heating.watt_density = Some(density);
-        heating.surface_cm2 = Some(power / density);
-        if !pad {
+        heating.watt_density = used_density;
+        heating.surface_cm2 = used_density.map(|density| power / density);
+        if let Some(density) = used_density.filter(|_| !pad) {
             heating.skin_film_c = rod.skin_film(density, thermostat);
             heating.skin_bulk_c = rod.skin_bulk(density, setup.soak_c);
         }
@@ -451,13 +506,16 @@ pub(super) fn heating(
     heating
 }
 
+/// An element gives at most so many times its rated power: 10 % over its voltage.
+const MOST_DELIVERED: f64 = 1.21;
+
 fn judge_fitted(
     usual: &WarmUp,
     fails: &[HeatingWhy],
     into_oil_w: f64,
     seconds: f64,
     over_circuit: bool,
-    too_dense: bool,
+    too_dense: Option<bool>,
 ) -> Fitted {
     let mut whys = fails.to_vec();
     match usual.time_s(into_oil_w) {
@@ -473,10 +531,16 @@ fn judge_fitted(
             status = HeatingStatus::CircuitTooSmall;
         }
     }
-    if too_dense {
+    if too_dense == Some(true) {
         whys.push(HeatingWhy::WattDensity);
         if status == HeatingStatus::Sized {
             status = HeatingStatus::ElementTooHot;
+        }
+    }
+    if too_dense.is_none() {
+        whys.push(HeatingWhy::SurfaceUnknown);
+        if status == HeatingStatus::Sized {
+            status = HeatingStatus::NotChecked;
         }
     }
     Fitted { status, whys }

@@ -103,8 +103,13 @@ fn gain(before: &Assessment, after: &Assessment) -> Option<f64> {
         (Some(_), None) if a.status == HeatingStatus::NotNeeded => 1.0,
         _ => 0.0,
     };
-    let good = |status| matches!(status, HeatingStatus::Sized | HeatingStatus::NotNeeded);
-    let status = f64::from(u8::from(good(a.status))) - f64::from(u8::from(good(b.status)));
+    // Not needed is good only where the machine starts on its coldest morning too.
+    let good = |found: &Assessment| match found.heating.status {
+        HeatingStatus::Sized => true,
+        HeatingStatus::NotNeeded => found.in_hand_k().is_some_and(|k| k >= 0.0),
+        _ => false,
+    };
+    let status = f64::from(u8::from(good(after))) - f64::from(u8::from(good(before)));
     let grade = |verdict| match verdict {
         Verdict::StartsCold => 4.0,
         Verdict::StartsColdInletUnproven => 3.0,
@@ -289,6 +294,16 @@ fn of_heat(case: &Case, oil: &Oil, tries: &mut Vec<Try>) {
         );
     } else if case.site.wind.as_m_per_s() > 0.0 {
         push(tries, "shelter", &[("site.wind", "0 m/s")], "parked where no wind reaches it", &[]);
+    }
+    if case.site.heating > case.site.minimum {
+        let text = case.site.minimum.to_string();
+        push(
+            tries,
+            "size-for-the-minimum",
+            &[("site.heating_temperature", &text)],
+            "a heater sized for the minimum, {minimum}",
+            &[("minimum", Figure::Temperature(case.site.minimum.as_celsius()).into())],
+        );
     }
     let hours = case.duty.time_to_warm.as_hours();
     let longer = case

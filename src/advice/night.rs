@@ -2,7 +2,7 @@
 
 use super::assess::{Assessment, Verdict};
 use super::first_turn::Running;
-use super::heating::{HeatingStatus, Tank, parked_loss_factor};
+use super::heating::{HeatingStatus, Tank};
 use super::say::{Figure, Say};
 use super::setup::Setup;
 use crate::case::Case;
@@ -14,7 +14,7 @@ use crate::oil::Oil;
 pub struct Night {
     /// The oil.
     pub oil: String,
-    /// Air round the tank all night, °C.
+    /// Coldest air round the tank, °C: what the heater is sized for.
     pub air_c: f64,
     /// When the machine was parked, h; `None` where it is not given.
     pub parked_h: Option<f64>,
@@ -107,6 +107,9 @@ pub fn night(case: &Case, oil: &Oil, found: &Assessment) -> Night {
     });
 
     match (case.duty.parked_oil, night.parked_h) {
+        _ if case.duty.standing.as_hours() > heat::LONGEST_CREDIT_H => night.remarks.push(
+            "No cooling is drawn: it stands for over a day (duty.standing), and nothing is left of the warmth.".into(),
+        ),
         (Some(parked), Some(from)) => {
             let to = night.switch_on_h.unwrap_or(0.0);
             part(Stretch::Cooling, cooling(&tank, parked.as_celsius(), (from, to), case));
@@ -172,14 +175,18 @@ fn cooling(tank: &Tank<'_>, parked_c: f64, (from, to): (f64, f64), case: &Case) 
     let top = tank.curve.top_c();
     let hotter = (parked_c > top).then(|| LossCurve::new(&tank.loss, parked_c));
     let curve = hotter.as_ref().unwrap_or(&tank.curve);
-    let (factor, air) = (parked_loss_factor(case), curve.air_c());
+    let (factor, air) = tank.parked_night(case, parked_c);
+    let clock = case.duty.shift_start.hours();
     let steps = ((to - from) / STEP_H).ceil().max(1.0);
     let step = (to - from) / steps;
     let mut points = vec![(from, parked_c)];
     let mut t = parked_c;
     let mut at = 1.0;
     while at <= steps && to > from {
-        t = heat::cooled_c(curve, &tank.capacity, t, step, factor, |_| air);
+        let begun = from + (at - 1.0) * step;
+        // The days before have the same hours.
+        let of_day = (clock + begun).rem_euclid(24.0);
+        t = heat::cooled_c(curve, &tank.capacity, t, step, factor, |hour| air(of_day + hour));
         points.push((from + at * step, t));
         at += 1.0;
     }
@@ -220,12 +227,20 @@ mod tests {
     fn the_night_ends_where_the_assessment_says() {
         let text = include_str!("../../examples/parked-warm-loader.toml");
         let case = CaseFile::read("parked-warm-loader.toml", text).check().unwrap();
+        let mut checked = 0;
         for oil in &case.oils {
             let found = assess(&case, oil);
             let night = night(&case, oil, &found);
             for part in &night.parts {
                 let rising = part.points.windows(2).all(|two| two[0].0 <= two[1].0);
                 assert!(rising, "{part:?}");
+            }
+            // Credited: what is left in the morning is what heating would start from.
+            if let (Some(cooled), None) = (night.parts.first(), night.switch_on_h) {
+                assert_eq!(cooled.kind, Stretch::Cooling);
+                let (hour, t) = cooled.points[cooled.points.len() - 1];
+                assert!(hour.abs() < 1e-9 && (t - found.tank_soak_c).abs() < 0.02, "{hour} {t}");
+                checked += 1;
             }
             if let Some(heated) = night.parts.iter().find(|part| part.kind == Stretch::Heating) {
                 let (first, last) = (heated.points[0], heated.points[heated.points.len() - 1]);
@@ -234,5 +249,6 @@ mod tests {
                 assert!(last.0 <= 1e-9 && last.0 > -5.0 / 60.0 - 1e-9, "ready within five minutes");
             }
         }
+        assert!(checked > 0);
     }
 }

@@ -158,11 +158,24 @@ fn start_warm(case: &Case, at: usize, found: &Assessment, suited: bool) -> Plan 
     let mut plan = plan(PlanKind::StartWarmTank, at);
     // The gate is what the tank must be over, as for a heated one.
     let gate = found.start_floor.at_c.map(|floor| floor + case.policy.heat.gate_margin_k);
+    // Only warmth that the tank kept of the day is there on the coldest morning.
     plan.allowed = suited
+        && case.duty.credit_parked_heat
         && found.verdict == Verdict::NeedsHeat
         && gate.is_some_and(|gate| found.tank_soak_c >= gate);
     plan.energy_kwh = plan.allowed.then_some(0.0);
     plan.ready_s = plan.energy_kwh;
+    if !case.duty.credit_parked_heat {
+        plan.why.push(Reason::new(
+            "colder-than-sized-for",
+            "no heater is sized: at {tank}, the heating temperature, it starts, at {soak} it does not; size for the minimum (site.heating_temperature)",
+            &[
+                ("tank", Figure::Temperature(found.tank_soak_c).into()),
+                ("soak", Figure::Temperature(found.soak_c).into()),
+            ],
+        ));
+        return plan;
+    }
     plan.why.push(Reason::new(
         "pump-cold",
         "the tank holds {tank}, but pump and hoses are at {soak}: clear the hose and warm the pump first",

@@ -21,6 +21,12 @@ impl Clock {
         f64::from(if span == 0 { day } else { span }) / 60.0
     }
 
+    /// Hours after midnight.
+    #[must_use]
+    pub fn hours(self) -> f64 {
+        f64::from(self.minutes) / 60.0
+    }
+
     /// The time `seconds` earlier, down to the full 5 minutes, and how many days before.
     #[must_use]
     pub fn before(self, seconds: f64) -> (Self, u32) {

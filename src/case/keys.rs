@@ -209,6 +209,7 @@ pub static KEYS: &[Key] = keys! {
     "supply.current", of::<Current>(), Optional, "\"16 A\"", "Rating of the circuit's breaker?", "panel";
     "supply.phases", Whole, Optional, "1", "One phase or three?", "outlet or panel";
     "supply.other_load", of::<Power>(), Optional, "\"0 W\"", "What else is on the same circuit?", "engine block heater, battery charger on the same cord";
+    "supply.tariff", Number(0.0, 1000.0), Optional, "0.30", "Price of a kWh, in your currency?", "electricity bill";
     "supply.heater_sizes", Powers, Typical, "[\"500 W\", \"1000 W\", \"1500 W\"]", "Heater sizes to be had?", "supplier's list";
 
     "element.kind", Choice(&["immersion", "pad"]), Typical, "\"immersion\"", "Heater in the oil, or a pad on the outside?", "your choice";

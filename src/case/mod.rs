@@ -15,6 +15,7 @@ mod file;
 pub mod keys;
 mod model;
 mod policy;
+mod write;
 
 pub use clock::Clock;
 pub use fault::{Fault, Faults, Place};

@@ -45,6 +45,8 @@ pub struct Case {
     pub duty: Duty,
     /// The circuit the heater is plugged into, where it is given.
     pub supply: Option<Supply>,
+    /// Price of a kWh, where it is given.
+    pub tariff: Option<f64>,
     /// Heater sizes to be had, smallest first.
     pub heater_sizes: Vec<Power>,
     /// The heating element.
@@ -159,6 +161,8 @@ pub struct Site {
     pub minimum: Temperature,
     /// How the minimum was arrived at.
     pub minimum_how: MinimumHow,
+    /// Which of the climate's it is, where it is one of them.
+    pub minimum_wish: Option<climate::Wish>,
     /// Air temperature the heater is sized for.
     pub heating: Temperature,
     /// How that was arrived at.

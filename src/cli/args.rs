@@ -84,6 +84,49 @@ pub(crate) enum ClimateCommand {
   coldsump climate show skarn-ridge --units us
   coldsump climate show climates/skarn-ridge.toml")]
     Show(ClimateShowArgs),
+    /// A climate file from weather records: GHCN-Daily, EPW, TMY3, ISD-Lite, or a CSV of date and tmin
+    #[command(after_help = "Examples:
+  coldsump climate from USW00026442.dly -o climates/valdez.toml
+  coldsump climate from 702910TY.csv -o climates/northway.toml --start-hour 6
+  coldsump climate from 702910-26412-*.txt -o x.toml --utc-offset -9
+  coldsump climate show climates/valdez.toml")]
+    From(ClimateFromArgs),
+}
+
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub(crate) enum UnitArg {
+    /// °C
+    C,
+    /// °F
+    F,
+}
+
+#[derive(Debug, Args)]
+pub(crate) struct ClimateFromArgs {
+    /// Weather records of one place
+    #[arg(required = true, value_name = "RECORDS")]
+    pub(crate) records: Vec<std::path::PathBuf>,
+    /// The climate file to write, whole or not at all
+    #[arg(short, long, value_name = "FILE")]
+    pub(crate) output: std::path::PathBuf,
+    /// Overwrite the file
+    #[arg(long)]
+    pub(crate) force: bool,
+    /// What a case calls it; the name of the file where not given
+    #[arg(long, value_name = "NAME")]
+    pub(crate) name: Option<String>,
+    /// Local standard time less UTC, hours: for records in UTC
+    #[arg(long, value_name = "HOURS", allow_hyphen_values = true)]
+    pub(crate) utc_offset: Option<f64>,
+    /// Unit of values whose file does not say it
+    #[arg(long, value_enum, value_name = "UNIT")]
+    pub(crate) units: Option<UnitArg>,
+    /// Hour of the morning that starts are counted at
+    #[arg(long, value_name = "HOUR", default_value = "6", value_parser = clap::value_parser!(u32).range(1..=24))]
+    pub(crate) start_hour: u32,
+    /// Where the records come from, for the file
+    #[arg(long, value_name = "TEXT")]
+    pub(crate) source: Option<String>,
 }
 
 #[derive(Debug, Args)]
@@ -91,6 +134,9 @@ pub(crate) struct ClimateShowArgs {
     /// A design class, a built-in site, or a climate file
     #[arg(value_name = "NAME")]
     pub(crate) name: String,
+    /// A case whose minimum and start floors are marked in the chart
+    #[arg(long, value_name = "CASE")]
+    pub(crate) case: Option<std::path::PathBuf>,
     /// Units to show
     #[arg(long, value_enum)]
     pub(crate) units: Option<UnitsArg>,

@@ -23,6 +23,8 @@ static TEXTS: &[(&str, &str)] = &[
     ("C2", include_str!("classes/C2.toml")),
     ("C3", include_str!("classes/C3.toml")),
     ("C4", include_str!("classes/C4.toml")),
+    ("valdez-coast", include_str!("../../climates/valdez-coast.toml")),
+    ("northway-interior", include_str!("../../climates/northway-interior.toml")),
     ("skarn-ridge", include_str!("../../climates/skarn-ridge.toml")),
     ("hollow-pit", include_str!("../../climates/hollow-pit.toml")),
     ("north-bench", include_str!("../../climates/north-bench.toml")),

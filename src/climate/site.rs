@@ -119,6 +119,16 @@ pub struct Below {
     pub mornings: Option<f64>,
 }
 
+/// The coldest mean over so many hours in a row.
+#[derive(Debug, Clone, Copy, PartialEq, Deserialize, Serialize)]
+#[serde(deny_unknown_fields)]
+pub struct Spell {
+    /// Hours.
+    pub hours: f64,
+    /// Mean, °C.
+    pub celsius: f64,
+}
+
 /// The coldest of one winter.
 #[derive(Debug, Clone, Copy, PartialEq, Deserialize, Serialize)]
 #[serde(deny_unknown_fields)]
@@ -185,6 +195,9 @@ pub struct Site {
     /// How often it is colder, warmest threshold first.
     #[serde(default, skip_serializing_if = "Vec::is_empty")]
     pub below: Vec<Below>,
+    /// The coldest means over hours in a row.
+    #[serde(default, skip_serializing_if = "Vec::is_empty")]
+    pub spell: Vec<Spell>,
     /// The coldest of each winter on record.
     #[serde(default, skip_serializing_if = "Vec::is_empty")]
     pub winter: Vec<WinterMinimum>,
@@ -348,6 +361,10 @@ impl Site {
         let mut rows: Vec<(f64, f64)> =
             self.below.iter().filter_map(|below| Some((below.celsius, of(below)?))).collect();
         rows.sort_by(|a, b| a.0.total_cmp(&b.0));
+        // Under a threshold that nothing is under there is nothing either.
+        if rows.first().is_some_and(|(at, count)| celsius < *at && *count == 0.0) {
+            return Some(0.0);
+        }
         let above = rows.iter().position(|(at, _)| *at >= celsius)?;
         let (to, count) = *rows.get(above)?;
         if (to - celsius).abs() < 1e-9 {

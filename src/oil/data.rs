@@ -99,6 +99,21 @@ pub enum OilError {
 /// rounding. This project's judgement.
 const LEAST_SPACING_K: f64 = 3.0;
 
+/// What is known of an oil that goes by its class otherwise.
+#[derive(Debug, Clone, Copy, PartialEq, Default)]
+pub struct ClassGiven {
+    /// Pour point.
+    pub pour_point: Option<Temperature>,
+    /// Cloud point.
+    pub cloud_point: Option<Temperature>,
+    /// Flash point.
+    pub flash_point: Option<Temperature>,
+    /// Density at 15 °C.
+    pub density: Option<Density>,
+    /// Certified biodegradable.
+    pub biodegradable: Option<bool>,
+}
+
 /// The likely range at one temperature.
 #[derive(Debug, Clone, Copy, PartialEq)]
 pub struct Estimate {
@@ -215,6 +230,18 @@ impl Oil {
     /// # Errors
     /// A class whose limits make no curve.
     pub fn from_class(class: &Class, policy: &BandPolicy) -> Result<Self, OilError> {
+        Self::from_class_and(class, &ClassGiven::default(), policy)
+    }
+
+    /// As [`Self::from_class`], with what is known of the oil at hand in place of the class's limits.
+    ///
+    /// # Errors
+    /// As [`Self::from_class`], and a cloud point under the pour point.
+    pub fn from_class_and(
+        class: &Class,
+        given: &ClassGiven,
+        policy: &BandPolicy,
+    ) -> Result<Self, OilError> {
         let mut points: Vec<(f64, f64)> = class.points().iter().map(|p| (p[0], p[1])).collect();
         if let (Some(index), [(_, kv40)]) = (class.index(), points.as_slice()) {
             let kv40 = *kv40;
@@ -226,14 +253,23 @@ impl Oil {
         let index = viscosity_index(curve.at(40.0), curve.at(100.0));
         // A class with an index stands for a grade; one without is drawn through limits.
         let class_only = class.index().map(|_| class.cold_limit());
-        let density = Density::kg_per_m3(class.density_15())
-            .map_err(|_| OilError::Curve(CurveError::TooFewPoints))?;
+        let density = match given.density {
+            Some(density) => density,
+            None => Density::kg_per_m3(class.density_15())
+                .map_err(|_| OilError::Curve(CurveError::TooFewPoints))?,
+        };
+        let pour_c = given.pour_point.map_or(class.pour_c(), Temperature::as_celsius);
+        if let Some(cloud) = given.cloud_point.map(Temperature::as_celsius) {
+            if cloud < pour_c {
+                return Err(OilError::CloudBelowPour { cloud, pour: pour_c });
+            }
+        }
         let input = BandInput {
             curve,
             base: class.base(),
             index,
-            pour_c: Some(class.pour_c()),
-            cloud_c: None,
+            pour_c: Some(pour_c),
+            cloud_c: given.cloud_point.map(Temperature::as_celsius),
             class_only,
         };
         Ok(Self {
@@ -245,9 +281,9 @@ impl Oil {
             band: Band::new(input, policy),
             index,
             index_differs: false,
-            pour_point: Temperature::celsius(class.pour_c()).ok(),
-            flash_point: Temperature::celsius(class.flash_c()).ok(),
-            biodegradable: Some(class.biodegradable()),
+            pour_point: Temperature::celsius(pour_c).ok(),
+            flash_point: given.flash_point.or_else(|| Temperature::celsius(class.flash_c()).ok()),
+            biodegradable: given.biodegradable.or(Some(class.biodegradable())),
             reference_only: class.reference_only(),
             class_only: true,
         })

@@ -15,6 +15,6 @@ mod walther;
 pub use band::{Band, BandPolicy, Base, ColdLimit, LIKELY_RANGE, Reach};
 pub use bulk::{Bulk, CONDUCTIVITY, DENSITY, SPECIFIC_HEAT};
 pub use class::{Class, typical_flash};
-pub use data::{Estimate, Oil, OilData, OilError};
+pub use data::{ClassGiven, Estimate, Oil, OilData, OilError};
 pub use viscosity_index::{D2270, reference_oils, reported, viscosity_at_100, viscosity_index};
 pub use walther::{CurveError, D341, Line, VALID, ViscosityCurve, nu, z};

@@ -23,8 +23,10 @@ pub fn advice(case: &Case, advice: &Advice, units: Units) -> Document {
     let mut blocks = vec![Block::Title(Line::from(case.title.clone()))];
     page.answer(&mut blocks);
     page.why(&mut blocks);
+    page.cold(&mut blocks);
     page.oils(&mut blocks);
     page.plans(&mut blocks);
+    page.winter(&mut blocks);
     page.ask_for(&mut blocks);
     page.procedure(&mut blocks);
     page.cautions(&mut blocks);
@@ -226,6 +228,109 @@ impl Page<'_> {
             blocks.push(Block::Heading(Line::from("Why")));
             blocks.push(Block::List(lines));
         }
+    }
+
+    fn cold(&self, blocks: &mut Vec<Block>) {
+        let cold = &self.advice.cold;
+        blocks.push(Block::Heading(Line::from("How cold that is")));
+        let mut lines = vec![Line::new().say(&cold.which, "/cold", self.shown)];
+        if let (Some(one), Some(ten)) = (cold.chance_a_winter, cold.chance_ten_winters) {
+            lines.push(
+                Line::from("colder than that: ")
+                    .figure(chance(one), "/cold/chance_a_winter")
+                    .words(" of winters, ")
+                    .figure(chance(ten), "/cold/chance_ten_winters")
+                    .words(" that it happens in ten"),
+            );
+        } else if let Some(why) = cold.why {
+            lines.push(Line::from(format!("how often it is colder is not known: {why}")));
+        }
+        if let Some(timing) = cold.timing {
+            let mut line = Line::from("switched on ")
+                .figure(self.shown.time(timing.latest_s), "/choice/timing/latest_s")
+                .words(" before the shift");
+            if let Some(high) = timing.latest_high_s {
+                line = line
+                    .words(" (")
+                    .figure(self.shown.time(high), "/choice/timing/latest_high_s")
+                    .words(" if the tank loses more)");
+            }
+            lines.push(
+                line.words(" it takes ")
+                    .figure(energy(timing.last_minute_kwh), "/choice/timing/last_minute_kwh")
+                    .words("; held warm all night ")
+                    .figure(energy(timing.hold_kwh), "/choice/timing/hold_kwh"),
+            );
+        }
+        blocks.push(Block::List(lines));
+        if !cold.against.is_empty() {
+            let rows = cold
+                .against
+                .iter()
+                .enumerate()
+                .map(|(at, one)| {
+                    let base = format!("/cold/against/{at}");
+                    vec![
+                        Line::from(one.wish.to_string()),
+                        Line::new().figure(
+                            self.shown.temperature(one.celsius),
+                            format!("{base}/temperature_c"),
+                        ),
+                        Line::from(if one.holds { "holds" } else { "NOT" }),
+                        Line::new().say(&one.text, &base, self.shown),
+                    ]
+                })
+                .collect();
+            blocks.push(Block::Table {
+                head: ["the site's", "cold", "the plan", "why"].map(str::to_owned).to_vec(),
+                rows,
+            });
+        }
+    }
+
+    fn winter(&self, blocks: &mut Vec<Block>) {
+        let decision = &self.advice.decision;
+        let rows: Vec<Vec<Line>> = decision
+            .plans
+            .iter()
+            .zip(&self.advice.cold.winter)
+            .enumerate()
+            .filter(|(_, (plan, _))| plan.allowed)
+            .filter_map(|(at, (plan, winter))| {
+                let winter = (*winter)?;
+                let base = format!("/plans/{at}/winter");
+                let cell = |value: Option<f64>, key: &str, decimals: usize| match value {
+                    Some(value) => {
+                        Line::new().figure(fixed(value, decimals), format!("{base}/{key}"))
+                    }
+                    None => Line::from("-"),
+                };
+                Some(vec![
+                    Line::from(plan.kind.words()),
+                    Line::from(self.case.oils.get(plan.oil).map_or("-", Oil::name)),
+                    cell(Some(winter.mornings), "mornings", 0),
+                    cell(winter.heater_hours, "heater_hours", 0),
+                    cell(winter.energy_kwh, "energy_kwh", 0),
+                    cell(winter.cost, "cost", 0),
+                ])
+            })
+            .collect();
+        if rows.is_empty() {
+            return;
+        }
+        blocks.push(Block::Heading(Line::from("The winter ahead")));
+        blocks.push(Block::Table {
+            head: ["plan", "oil", "mornings too cold", "heater h", "kWh", "cost"]
+                .map(str::to_owned)
+                .to_vec(),
+            rows,
+        });
+        let counted = self.advice.cold.winter.iter().flatten().all(|winter| winter.counted);
+        blocks.push(Block::Text(Line::from(if counted {
+            "A usual year by the counts of the climate file; mornings on which the oil does not start without heat."
+        } else {
+            "A usual year from monthly means (Erbs): good for the bulk of the winter, not for its coldest days. Mornings on which the oil does not start without heat."
+        })));
     }
 
     fn oils(&self, blocks: &mut Vec<Block>) {
@@ -658,6 +763,18 @@ fn name_of(oil: &Oil) -> String {
 
 fn number(shown: Shown, mm2_s: f64) -> String {
     shown.viscosity(mm2_s).replace(" mm²/s", "")
+}
+
+/// A chance as people say it.
+fn chance(share: f64) -> String {
+    let percent = 100.0 * share;
+    if percent < 1.0 {
+        "under 1 %".to_owned()
+    } else if percent > 99.0 {
+        "over 99 %".to_owned()
+    } else {
+        format!("{} %", fixed(percent, 0))
+    }
 }
 
 fn capital(text: &str) -> String {

@@ -33,6 +33,8 @@ pub enum Block {
         /// Rows, each as long as the head.
         rows: Vec<Vec<Line>>,
     },
+    /// Lines set as they are: a chart in characters.
+    Drawing(Vec<String>),
     /// A list.
     List(Vec<Line>),
     /// Numbered steps: number, what to do, and lines that belong to it.
@@ -154,6 +156,7 @@ impl Block {
             }
             Self::Pairs(pairs) => pairs.iter().map(|(_, line)| line).collect(),
             Self::Table { rows, .. } => rows.iter().flatten().collect(),
+            Self::Drawing(_) => Vec::new(),
             Self::List(lines) => lines.iter().collect(),
             Self::Steps(steps) => steps.iter().flat_map(|(_, lines)| lines).collect(),
         }

@@ -21,6 +21,9 @@ pub fn markdown(document: &Document) -> String {
                 }
             }
             Block::Table { head, rows } => table(&mut out, head, rows),
+            Block::Drawing(lines) => {
+                out.push_str(&format!("```text\n{}\n```\n", lines.join("\n")));
+            }
             Block::List(lines) => {
                 for one in lines {
                     out.push_str(&format!("- {}\n", line(one)));

@@ -70,6 +70,12 @@ fn render(out: &mut String, block: &Block, look: Look) {
             }
         }
         Block::Table { head, rows } => table(out, head, rows, look),
+        Block::Drawing(lines) => {
+            for line in lines {
+                out.push_str(line.trim_end());
+                out.push('\n');
+            }
+        }
         Block::List(lines) => {
             for line in lines {
                 out.push_str("  - ");

@@ -2,8 +2,8 @@
 
 use super::units::Shown;
 use crate::advice::{
-    Advice, AskFor, Assessment, Bound, Choice, Confirm, Fitted, Heating, Lever, LimitResult,
-    Outcome, Plan, Reason, Say, Step,
+    Advice, AskFor, Assessment, Bound, Choice, Cold, Confirm, Fitted, Heating, Lever, LimitResult,
+    Outcome, Plan, Reason, Say, Step, WinterAhead,
 };
 use crate::case::{Assumption, Case, From, MinimumHow, Units};
 use crate::oil::{Oil, reported};
@@ -78,7 +78,11 @@ pub fn advice_json(case: &Case, advice: &Advice) -> Value {
     let mut map = head(case);
     let mut put = |key: &str, value: Value| map.insert(key.to_owned(), value);
     put("oils", case.oils.iter().zip(&decision.oils).map(|(oil, f)| oil_json(oil, f)).collect());
-    put("plans", decision.plans.iter().map(plan_json).collect());
+    put(
+        "plans",
+        decision.plans.iter().zip(&advice.cold.winter).map(|(p, w)| plan_json(p, *w)).collect(),
+    );
+    put("cold", cold_json(&advice.cold));
     put("ask_for", ask_for_json(&advice.ask_for));
     put("choice", choice_json(case, advice, &decision.choice));
     put(
@@ -221,7 +225,43 @@ fn reason_json(reason: &Reason) -> Value {
     with_figures(json!({ "id": reason.id, "text": metric(&reason.text) }), &[&reason.text])
 }
 
-fn plan_json(plan: &Plan) -> Value {
+fn cold_json(cold: &Cold) -> Value {
+    with_figures(
+        json!({
+            "which": metric(&cold.which),
+            "chance_a_winter": cold.chance_a_winter,
+            "chance_ten_winters": cold.chance_ten_winters,
+            "why": cold.why,
+            "against": cold.against.iter().map(|one| with_figures(json!({
+                "level": one.wish.to_string(),
+                "temperature_c": one.celsius,
+                "holds": one.holds,
+                "text": metric(&one.text),
+            }), &[&one.text])).collect::<Vec<_>>(),
+        }),
+        &[&cold.which],
+    )
+}
+
+fn plan_json(plan: &Plan, winter: Option<WinterAhead>) -> Value {
+    let mut value = plan_figures(plan);
+    if let (Some(winter), Value::Object(map)) = (winter, &mut value) {
+        map.insert(
+            "winter".to_owned(),
+            json!({
+                "mornings": winter.mornings,
+                "heater_hours": winter.heater_hours,
+                "energy_kwh": winter.energy_kwh,
+                "cost": winter.cost,
+                "from": if winter.counted { "record" } else { "monthly-means" },
+                "why": winter.cost.is_none().then_some("no tariff, or nothing to count"),
+            }),
+        );
+    }
+    value
+}
+
+fn plan_figures(plan: &Plan) -> Value {
     json!({
         "plan": plan.kind.id(),
         "oil": plan.oil,
@@ -255,7 +295,7 @@ fn ask_for_json(ask: &AskFor) -> Value {
 
 fn choice_json(case: &Case, advice: &Advice, choice: &Choice) -> Value {
     let plan = advice.decision.chosen();
-    json!({
+    let mut value = json!({
         "plan": choice.plan,
         "oil": plan.and_then(|plan| case.oils.get(plan.oil)).map(Oil::name),
         "heater_w": plan.and_then(|plan| plan.heater_w),
@@ -263,7 +303,21 @@ fn choice_json(case: &Case, advice: &Advice, choice: &Choice) -> Value {
             "clock": clock.to_string(), "days_before": days,
         })),
         "why": choice.why.iter().map(reason_json).collect::<Vec<_>>(),
-    })
+    });
+    if let (Some(timing), Value::Object(map)) = (advice.cold.timing, &mut value) {
+        map.insert(
+            "timing".to_owned(),
+            json!({
+                "latest_s": timing.latest_s,
+                "latest_high_s": timing.latest_high_s,
+                "last_minute_kwh": timing.last_minute_kwh,
+                "hold_kwh": timing.hold_kwh,
+                "why": timing.latest_high_s.is_none()
+                    .then_some("a tank that loses more is never ready"),
+            }),
+        );
+    }
+    value
 }
 
 fn step_json(at: usize, step: &Step) -> Value {

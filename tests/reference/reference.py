@@ -332,7 +332,7 @@ def limits(case, oil, pump, soak, edge):
 
 START = ("pour-margin", "viscosity-start", "inlet-pressure-start")
 LIGHT = START + ("viscosity-work", "inlet-pressure-light")
-WORK = START + ("viscosity-work", "inlet-pressure-work")
+WORK = LIGHT + ("inlet-pressure-work",)
 
 
 def floor(rows, names):
@@ -511,7 +511,7 @@ def assess(case, data):
     tank = Tank(case, oil, ambient)
     tank_soak = ambient
     duty = case["duty"]
-    if duty.get("credit_parked_heat"):
+    if duty.get("credit_parked_heat") and get(case, "duty.standing", 12) <= 24:
         factor = 1.0 if tank.cooldown else 1.4
         span = hours_between(duty["parked_at"], duty.get("shift_start", "06:00")) * 3600
         path = solve_ivp(lambda _, y: [-factor * tank.loss(y[0]) / tank.c(y[0])], (0, span),

@@ -168,7 +168,8 @@ fn heater(scene: &Scene<'_>, steps: &mut Vec<Step>) {
     let element = &scene.case.element;
     let Some(watts) = plan.heater_w else { return };
     let fitted = element.power.is_some_and(|power| (power.as_watts() - watts).abs() < 0.5)
-        && heating.fitted.as_ref().is_some_and(|f| f.whys.is_empty());
+        && heating.fitted.is_some()
+        && heating.elements_w.len() == 1;
     let what = match plan.elements_w.len() {
         0 | 1 => "{watts}".to_owned(),
         count => format!("{{watts}} in {count} elements"),

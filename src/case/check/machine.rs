@@ -60,12 +60,17 @@ impl Desk<'_> {
             self.out_of_climate("site.elevation", climate.as_ref(), |climate| climate.elevation_m);
         let elevation = elevation.or_else(|| self.or_typical("site.elevation", 0.0, "sea level"));
         let clear_sky = self.switch("site.clear_sky").unwrap_or(false);
+        let minimum_wish = match self.file.text("site.minimum_temperature") {
+            Some(text) => Wish::read(text).ok().flatten(),
+            None => climate.as_ref().and_then(climate::Site::usual_minimum).map(|(wish, _)| wish),
+        };
         let (minimum, minimum_how) = minimum?;
         let (heating, heating_how) = heating?;
         Some(Site {
             climate,
             minimum,
             minimum_how,
+            minimum_wish,
             heating,
             heating_how,
             wind: wind?,
@@ -617,6 +622,8 @@ impl Desk<'_> {
 
 /// A list of powers, `500 W; 1000 W` or `500 W, 1000 W`.
 fn powers(text: &str) -> Result<Vec<Power>, String> {
+    // As typed, or as a file has it: `["500 W", "1000 W"]`.
+    let text = text.trim().trim_start_matches('[').trim_end_matches(']').replace('"', "");
     let separator = if text.contains(';') { ';' } else { ',' };
     let sizes: Vec<Power> = text
         .split(separator)

@@ -72,6 +72,7 @@ impl Desk<'_> {
         let circuit = self.circuit(reservoir.as_ref());
         let duty = self.duty();
         let supply = self.supply();
+        let tariff = self.number("supply.tariff");
         let heater_sizes = self.heater_sizes();
         let element = self.element();
         let oils = self.oils(&policy);
@@ -95,6 +96,7 @@ impl Desk<'_> {
             circuit: circuit?,
             duty: duty?,
             supply,
+            tariff,
             heater_sizes,
             element: element?,
             oils,

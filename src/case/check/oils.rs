@@ -3,7 +3,7 @@
 use super::super::model::From;
 use super::super::policy::Policy;
 use super::desk::Desk;
-use crate::oil::{Base, Class, CurveError, Oil, OilData, OilError, saybolt};
+use crate::oil::{Base, Class, ClassGiven, CurveError, Oil, OilData, OilError, saybolt};
 use crate::quantity::{Density, Quantity, Temperature, ViscosityReading};
 
 impl Desk<'_> {
@@ -51,12 +51,28 @@ impl Desk<'_> {
 
         if !data_sheet && self.faults.len() == faults_before {
             return match (class, class_text) {
-                (Some(class), _) => self.class_oil(
-                    number,
-                    class,
-                    (name, in_service, reference_only.unwrap_or(false)),
-                    policy,
-                ),
+                (Some(class), _) => {
+                    if self.file.text(&key("base")).is_some() {
+                        let base = self.word(&key("base"));
+                        if base.is_some_and(|base| base != class.base().id()) {
+                            let message = format!(
+                                "class {} is {}; give its viscosities where it is another",
+                                class.id(),
+                                class.base()
+                            );
+                            self.fault(&key("base"), message);
+                        }
+                    }
+                    let given = ClassGiven {
+                        pour_point,
+                        cloud_point,
+                        flash_point: self.given(&key("flash_point")),
+                        density: self.given(&key("density")),
+                        biodegradable,
+                    };
+                    let listed = (name, in_service, reference_only.unwrap_or(false));
+                    self.class_oil(number, class, given, listed, policy)
+                }
                 (None, Some(text)) => {
                     let known: Vec<&str> = Class::all().iter().map(Class::id).collect();
                     self.fault(
@@ -99,6 +115,14 @@ impl Desk<'_> {
             reference_only: reference_only.unwrap_or(false),
         };
         match Oil::from_data(data, &policy.oil) {
+            Ok(oil) if oil.viscosity_index().is_some_and(|index| !ORDINARY.contains(&index)) => {
+                let index = oil.viscosity_index().unwrap_or_default();
+                self.fault(
+                    &key("viscosity"),
+                    format!("gives a viscosity index of {index:.0}, which no oil has; is there a digit too many or too few?"),
+                );
+                None
+            }
             Ok(oil) => Some(oil),
             Err(error) => {
                 let at = self.blamed(number, &error);
@@ -140,19 +164,26 @@ impl Desk<'_> {
         at.unwrap_or_else(|| key("viscosity"))
     }
 
-    /// An oil of a built-in class without a data sheet. What the sheet would say is refused here:
-    /// half a data sheet is neither.
+    /// An oil of a built-in class without viscosities; what else is known of it wins over the class.
     pub(super) fn class_oil(
         &mut self,
         number: usize,
         class: &'static Class,
+        given: ClassGiven,
         (name, in_service, reference_only): (String, bool, bool),
         policy: &Policy,
     ) -> Option<Oil> {
-        let oil = Oil::from_class(class, &policy.oil).ok()?;
+        let oil = match Oil::from_class_and(class, &given, &policy.oil) {
+            Ok(oil) => oil,
+            Err(error) => {
+                let at = self.blamed(number, &error);
+                self.fault(&at, error.to_string());
+                return None;
+            }
+        };
         self.assume(
             &format!("oil[{number}].viscosity"),
-            format!("class {}: middle of the grade, least index, warmest pour point", class.id()),
+            format!("class {}: middle of the grade, least index", class.id()),
             class.source(),
         );
         Some(oil.listed(name, in_service, reference_only))
@@ -239,6 +270,9 @@ impl Desk<'_> {
         self.or_typical(&key, typical, "least flash point of the class, memory")
     }
 }
+
+/// Viscosity indices that oils have, with room on both sides.
+const ORDINARY: std::ops::RangeInclusive<f64> = -150.0..=500.0;
 
 /// The kinematic viscosity among data-sheet points at a temperature, mm²/s.
 fn kinematic_at(points: &[(Temperature, ViscosityReading)], celsius: f64) -> Option<f64> {

@@ -17,7 +17,7 @@ pub fn overnight(case: &Case, found: &Assessment, night: &Night, units: Units) -
     }
     let gate = found.start_floor.at_c.map(|floor| floor + case.policy.heat.gate_margin_k);
     let levels = [
-        ("air", Some(night.air_c)),
+        ("coldest air", Some(night.air_c)),
         ("first turn from", gate),
         ("light work from", found.light_floor.at_c),
         ("full load from", found.work_floor.at_c),
