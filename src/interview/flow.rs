@@ -277,7 +277,7 @@ impl Desk<'_> {
         let required =
             item.key.as_deref().and_then(keys::find).is_some_and(|k| k.need == Need::Required);
         if matches!(text, "" | "?" | "none") {
-            return if required && text != "none" || required {
+            return if required {
                 Err("is needed: without it there is no advice".to_owned())
             } else {
                 Ok(())
