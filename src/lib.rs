@@ -47,6 +47,8 @@ pub mod air;
 pub mod case;
 pub mod climate;
 pub mod heat;
+#[cfg(feature = "cli")]
+pub mod interview;
 pub mod oil;
 pub mod pump;
 pub mod quantity;

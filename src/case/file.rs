@@ -179,6 +179,12 @@ impl CaseFile {
         Ok(key.to_owned())
     }
 
+    /// The text of a key, as it stands in the file or was set over it.
+    #[must_use]
+    pub fn get(&self, key: &str) -> Option<&str> {
+        self.text(key)
+    }
+
     pub(super) fn entry(&self, key: &str) -> Option<&Entry> {
         self.entries.get(key)
     }

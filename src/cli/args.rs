@@ -54,6 +54,15 @@ pub(crate) enum Command {
   coldsump advise *.toml --format json        one line a case
   cat loader.toml | coldsump advise -")]
     Advise(AdviseArgs),
+    /// Questions that make a case, then the advice
+    #[command(after_help = "Examples:
+  coldsump interview --quick
+  coldsump interview loader.toml          its answers stand as defaults; a new file is written
+  coldsump interview --plain              numbered lines, no redraw
+  coldsump interview --quick --answers answers.toml -o loader.toml
+
+In it: Esc goes back, `?` is I don't know, Ctrl-C leaves with everything saved.")]
+    Interview(InterviewArgs),
     /// Every oil of a case: viscosity at the soak, limits, floors, heating
     #[command(after_help = "Examples:
   coldsump assess loader.toml
@@ -72,6 +81,34 @@ pub(crate) enum Command {
       --base polymer-thickened --pour-point \"-39 °C\" --at \"-30 °C\"
   coldsump oil --file loader.toml --at \"-40..0 °C by 5\" --format csv")]
     Oil(OilArgs),
+}
+
+#[derive(Debug, Default, Args)]
+pub(crate) struct InterviewArgs {
+    /// A case whose answers stand as defaults; it is not changed
+    #[arg(value_name = "CASE")]
+    pub(crate) case: Option<std::path::PathBuf>,
+    /// About fifteen questions; all else typical and listed as assumed
+    #[arg(long)]
+    pub(crate) quick: bool,
+    /// Numbered lines without redraw, for screen readers and dumb terminals
+    #[arg(long)]
+    pub(crate) plain: bool,
+    /// Answers from a file, by question id
+    #[arg(long, value_name = "FILE")]
+    pub(crate) answers: Option<std::path::PathBuf>,
+    /// The case to write; a new name where not given
+    #[arg(short, long, value_name = "FILE")]
+    pub(crate) output: Option<std::path::PathBuf>,
+    /// Overwrite it
+    #[arg(long, requires = "output")]
+    pub(crate) force: bool,
+    /// Do not offer to go on with what was left unfinished
+    #[arg(long)]
+    pub(crate) fresh: bool,
+    /// Units of the advice
+    #[arg(long, value_enum)]
+    pub(crate) units: Option<UnitsArg>,
 }
 
 #[derive(Debug, Subcommand)]

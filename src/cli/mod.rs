@@ -4,6 +4,7 @@ mod advise;
 mod args;
 mod assess;
 mod climate;
+mod interview;
 mod oil;
 mod output;
 
@@ -15,6 +16,8 @@ use std::process::ExitCode;
 pub(crate) const DONE: u8 = 0;
 /// Advice given, no plan starts the machine.
 pub(crate) const NO_PLAN: u8 = 3;
+/// Interrupted by whoever was asked.
+pub(crate) const INTERRUPTED: u8 = 130;
 /// Internal or I/O failure.
 pub(crate) const FAILED: u8 = 1;
 /// Wrong input or call; good cases are still answered.
@@ -23,15 +26,23 @@ pub(crate) const WRONG: u8 = 2;
 pub(crate) fn main() -> ExitCode {
     let cli = Cli::parse();
     let done = match cli.command {
-        None => {
-            eprintln!("coldsump: which oil, which heater, which steps on the coldest morning\n");
-            eprintln!("try: coldsump advise CASE.toml");
-            eprintln!("try: coldsump oil HM-46 --at \"-40..100 °C by 10\"");
-            eprintln!("try: coldsump --help");
-            Ok(WRONG)
-        }
+        None => match interview::offered(&cli.look) {
+            Ok(None) => {
+                eprintln!(
+                    "coldsump: which oil, which heater, which steps on the coldest morning\n"
+                );
+                eprintln!("try: coldsump interview --quick");
+                eprintln!("try: coldsump advise CASE.toml");
+                eprintln!("try: coldsump oil HM-46 --at \"-40..100 °C by 10\"");
+                eprintln!("try: coldsump --help");
+                Ok(WRONG)
+            }
+            Ok(Some(code)) => Ok(code),
+            Err(error) => Err(error),
+        },
         Some(Command::Advise(args)) => advise::run(&args, &cli.look),
         Some(Command::Assess(args)) => assess::run(&args, &cli.look),
+        Some(Command::Interview(args)) => interview::run(&args, &cli.look),
         Some(Command::Climate(command)) => climate::run(&command, &cli.look),
         Some(Command::Oil(args)) => oil::run(&args, &cli.look),
     };
