@@ -31,6 +31,8 @@ words! {
 pub struct CautionRow {
     /// Its id.
     pub id: String,
+    /// A few words for the card.
+    pub short: String,
     signal: String,
     /// A stop: nothing is started until it is settled.
     #[serde(default)]

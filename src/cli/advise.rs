@@ -46,6 +46,7 @@ pub(crate) fn run(args: &AdviseArgs, look: &LookArgs) -> Result<u8> {
                 });
                 out.push('\n');
             }
+            AdviseFormat::Html => out.push_str(&report::html(&case, &advice, units)),
             AdviseFormat::Markdown => out.push_str(&report::markdown(&document())),
             AdviseFormat::Text => {
                 let look = if args.output.is_some() {
@@ -54,6 +55,9 @@ pub(crate) fn run(args: &AdviseArgs, look: &LookArgs) -> Result<u8> {
                     look
                 };
                 out.push_str(&report::text(&document(), look));
+                if args.charts {
+                    out.push_str(&charts(&case, &advice, units, look));
+                }
             }
         }
         if args.output.is_none() {
@@ -68,6 +72,27 @@ pub(crate) fn run(args: &AdviseArgs, look: &LookArgs) -> Result<u8> {
         output::write(path, &out, args.force)?;
     }
     Ok(code)
+}
+
+/// The charts of the oil advised on, in characters.
+fn charts(case: &Case, advice: &advice::Advice, units: Units, look: report::Look) -> String {
+    use report::chart;
+    let mut out = String::new();
+    let decision = &advice.decision;
+    let Some(at) = decision.focus() else { return out };
+    let (Some(oil), Some(found)) = (case.oils.get(at), decision.oils.get(at)) else { return out };
+    let night = advice::night(case, oil, found);
+    let drawn = [
+        Some(chart::viscosity(case, &[(oil, found)], units)),
+        chart::inlet(case, oil, found, units).ok(),
+        chart::speed(case, oil, found, units).ok(),
+        chart::overnight(case, found, &night, units),
+    ];
+    for chart in drawn.iter().flatten() {
+        out.push('\n');
+        out.push_str(&chart::terminal(chart, look.width, 20, look.ascii));
+    }
+    out
 }
 
 /// The graver of two exit codes: a failure, then wrong input, then no plan.

@@ -50,6 +50,8 @@ pub(crate) enum Command {
     #[command(after_help = "Examples:
   coldsump advise loader.toml
   coldsump advise loader.toml --format markdown -o loader.md
+  coldsump advise loader.toml --format html -o loader.html    the card for the cab, and the file
+  coldsump advise loader.toml --charts
   coldsump advise loader.toml --set \"suction.bore=63.5 mm\"
   coldsump advise *.toml --format json        one line a case
   cat loader.toml | coldsump advise -")]
@@ -203,6 +205,7 @@ pub(crate) enum AdviseFormat {
     Text,
     Json,
     Markdown,
+    Html,
 }
 
 #[derive(Debug, Args)]
@@ -213,6 +216,9 @@ pub(crate) struct AdviseArgs {
     /// How to write the advice
     #[arg(long, value_enum, default_value = "text")]
     pub(crate) format: AdviseFormat,
+    /// Draw the charts behind the text
+    #[arg(long)]
+    pub(crate) charts: bool,
     /// Write to a file, whole or not at all
     #[arg(short, long, value_name = "FILE")]
     pub(crate) output: Option<std::path::PathBuf>,

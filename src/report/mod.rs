@@ -5,9 +5,11 @@
 
 mod advice;
 mod assessment;
+mod card;
 pub mod chart;
 mod climate;
 mod document;
+mod html;
 mod keys;
 mod markdown;
 mod oil;
@@ -17,8 +19,10 @@ mod wire;
 
 pub use advice::advice;
 pub use assessment::assessment;
+pub use card::{Card, card};
 pub use climate::{climate, climates};
 pub use document::{Block, Document, Line, Span, Tone};
+pub use html::{card_lines, html};
 pub use keys::key_list;
 pub use markdown::markdown;
 pub use oil::{oil_points, oil_points_csv};
