@@ -163,11 +163,17 @@ impl Block {
     }
 }
 
-/// Control characters, terminal escapes among them, are no words: they become spaces.
+/// Control characters, terminal escapes among them, are no words: they become spaces. What turns the
+/// direction of text is left out.
 fn clean(text: String) -> String {
-    if text.chars().any(char::is_control) {
-        text.chars().map(|c| if c.is_control() { ' ' } else { c }).collect()
+    if text.chars().any(|c| c.is_control() || turns(c)) {
+        text.chars().filter(|c| !turns(*c)).map(|c| if c.is_control() { ' ' } else { c }).collect()
     } else {
         text
     }
+}
+
+/// A character that turns the direction of text: Unicode Bidirectional Algorithm, UAX #9.
+pub(super) const fn turns(c: char) -> bool {
+    matches!(c, '\u{200e}' | '\u{200f}' | '\u{202a}'..='\u{202e}' | '\u{2066}'..='\u{2069}')
 }

@@ -16,7 +16,7 @@ pub fn html(case: &Case, advice: &Advice, units: Units) -> String {
     out.push_str("<meta name=\"viewport\" content=\"width=device-width, initial-scale=1\">\n");
     out.push_str(&format!(
         "<title>{}</title>\n<style>\n{STYLE}</style>\n</head>\n<body>\n",
-        esc(&visible(&case.title))
+        esc(&case.title)
     ));
     the_card(&mut out, &card(case, advice, units));
     out.push_str("<main class=\"pages\">\n");
@@ -47,8 +47,8 @@ fn the_card(out: &mut String, card: &Card) {
     out.push_str("<section class=\"card\">\n<header>\n");
     out.push_str(&format!(
         "<h1>{}</h1>\n<p class=\"what\">{}</p>\n</header>\n",
-        esc(&visible(&card.title)),
-        esc(&visible(&card.headline))
+        esc(&card.title),
+        esc(&card.headline)
     ));
     out.push_str("<div class=\"gates\">\n");
     for (name, line) in &card.gates {
@@ -184,7 +184,7 @@ fn charts(out: &mut String, case: &Case, advice: &Advice, units: Units) {
 fn spans(line: &Line) -> String {
     let mut out = String::new();
     for span in &line.0 {
-        let text = esc(&visible(&span.text));
+        let text = esc(&span.text);
         match (&span.pointer, span.tone) {
             (Some(pointer), _) => {
                 out.push_str(&format!("<span data-value=\"{}\">{text}</span>", esc(pointer)));
@@ -195,14 +195,6 @@ fn spans(line: &Line) -> String {
         }
     }
     out
-}
-
-/// Text that turns the direction of what follows it is not let through.
-fn visible(text: &str) -> String {
-    text.chars()
-        .filter(|c| !matches!(c, '\u{202a}'..='\u{202e}' | '\u{2066}'..='\u{2069}' | '\u{200e}' | '\u{200f}'))
-        .map(|c| if c.is_control() { ' ' } else { c })
-        .collect()
 }
 
 /// The figures of the card with the pointers of their values, for those who check them.

@@ -14,7 +14,7 @@ const SAMPLE: f64 = 34.0;
 const DASHES: [&str; 6] = ["", "9 4", "2 3", "10 3 2 3", "16 5", "6 2 1 2 1 2"];
 
 /// Text made safe inside SVG or HTML: the five characters with a meaning are written as entities,
-/// and characters that XML 1.0 does not allow are left out.
+/// and characters that XML 1.0 does not allow, or that turn the direction of text, are left out.
 ///
 /// # Example
 /// ```
@@ -33,6 +33,8 @@ pub fn esc(text: &str) -> String {
             '\t' | '\n' | '\r' => out.push(' '),
             // Char in XML 1.0 (fifth edition), section 2.2; C1 controls, allowed there, go too.
             c if c.is_control() || matches!(c, '\u{fffe}' | '\u{ffff}') => {}
+            // What turns the direction of the text behind it.
+            c if crate::report::document::turns(c) => {}
             c => out.push(c),
         }
     }
