@@ -46,6 +46,8 @@ pub mod advice;
 pub mod air;
 pub mod case;
 pub mod climate;
+#[cfg(feature = "cli")]
+pub mod fleet;
 pub mod heat;
 #[cfg(feature = "cli")]
 pub mod interview;

@@ -455,3 +455,19 @@ fn climates_are_listed_shown_and_made() {
     assert!(!other.exists());
     std::fs::remove_dir_all(&folder).unwrap();
 }
+
+#[test]
+fn two_cases_are_compared() {
+    let folder = std::env::temp_dir().join(format!("coldsump-compare-{}", std::process::id()));
+    std::fs::create_dir_all(&folder).unwrap();
+    let other = folder.join("other.toml");
+    let text_of = std::fs::read_to_string(LOADER).unwrap();
+    std::fs::write(&other, text_of.replace("bore = \"50.8 mm\"", "bore = \"63.5 mm\"")).unwrap();
+    let out = text(&run(&["compare", LOADER, other.to_str().unwrap()]).stdout);
+    assert!(out.contains("suction.bore") && out.contains("63.5 mm"), "{out}");
+    assert!(out.contains("synthetic: full from") && out.contains("-11.0 °C"), "{out}");
+    assert!(!out.contains("synthetic: turn from"), "{out}");
+    let out = text(&run(&["compare", LOADER, LOADER]).stdout);
+    assert_eq!(out.matches("Nothing.").count(), 2, "{out}");
+    std::fs::remove_dir_all(&folder).unwrap();
+}

@@ -65,6 +65,19 @@ pub(crate) enum Command {
 
 In it: Esc goes back, `?` is I don't know, Ctrl-C leaves with everything saved.")]
     Interview(InterviewArgs),
+    /// What changed between two cases, and why
+    #[command(after_help = "Example:
+  coldsump compare loader.toml loader-new-hose.toml")]
+    Compare(CompareArgs),
+    /// Many machines: what to buy, fit and stock, and what the yard must carry
+    #[command(after_help = "Examples:
+  coldsump fleet fleet.csv
+  coldsump fleet fleet.csv --yard-power \"30 kW\"
+  coldsump fleet fleet.csv --format csv -o decided.csv
+  coldsump fleet fleet.csv --sweep \"site.minimum_temperature=-20..-50 °C by 5\"
+  coldsump fleet fleet.csv --format csv --card cards
+  cat rows.jsonl | coldsump fleet - --format jsonl")]
+    Fleet(FleetArgs),
     /// Every oil of a case: viscosity at the soak, limits, floors, heating
     #[command(after_help = "Examples:
   coldsump assess loader.toml
@@ -109,6 +122,64 @@ pub(crate) struct InterviewArgs {
     #[arg(long)]
     pub(crate) fresh: bool,
     /// Units of the advice
+    #[arg(long, value_enum)]
+    pub(crate) units: Option<UnitsArg>,
+}
+
+#[derive(Debug, Args)]
+pub(crate) struct CompareArgs {
+    /// The first case
+    #[arg(value_name = "CASE")]
+    pub(crate) one: std::path::PathBuf,
+    /// The second case
+    #[arg(value_name = "OTHER")]
+    pub(crate) other: std::path::PathBuf,
+    /// Units to show
+    #[arg(long, value_enum)]
+    pub(crate) units: Option<UnitsArg>,
+}
+
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub(crate) enum FleetFormat {
+    Text,
+    Csv,
+    Jsonl,
+    Html,
+}
+
+#[derive(Debug, Clone, Args)]
+pub(crate) struct FleetArgs {
+    /// CSV, TOML or JSON Lines of machines; `-` reads standard input
+    #[arg(value_name = "FLEET")]
+    pub(crate) fleet: std::path::PathBuf,
+    /// How to write it
+    #[arg(long, value_enum, default_value = "text")]
+    pub(crate) format: FleetFormat,
+    /// Write to a file
+    #[arg(short, long, value_name = "FILE")]
+    pub(crate) output: Option<std::path::PathBuf>,
+    /// Overwrite what is there
+    #[arg(long)]
+    pub(crate) force: bool,
+    /// Go on with a run of csv or jsonl that was broken off
+    #[arg(long, requires = "output", conflicts_with = "force")]
+    pub(crate) resume: bool,
+    /// A case file for rows that name no base
+    #[arg(long, value_name = "CASE")]
+    pub(crate) base: Option<String>,
+    /// Set a key of every machine; may be repeated
+    #[arg(long, value_name = "KEY=VALUE")]
+    pub(crate) set: Vec<String>,
+    /// One key over a range: how many machines still start
+    #[arg(long, value_name = "KEY=FROM..TO by STEP")]
+    pub(crate) sweep: Option<String>,
+    /// What the yard's supply carries
+    #[arg(long, value_name = "POWER")]
+    pub(crate) yard_power: Option<coldsump::quantity::Power>,
+    /// Write each machine's card and pages into a folder
+    #[arg(long, value_name = "FOLDER")]
+    pub(crate) card: Option<std::path::PathBuf>,
+    /// Units to show
     #[arg(long, value_enum)]
     pub(crate) units: Option<UnitsArg>,
 }

@@ -4,6 +4,8 @@ mod advise;
 mod args;
 mod assess;
 mod climate;
+mod compare;
+mod fleet;
 mod interview;
 mod oil;
 mod output;
@@ -43,6 +45,8 @@ pub(crate) fn main() -> ExitCode {
         Some(Command::Advise(args)) => advise::run(&args, &cli.look),
         Some(Command::Assess(args)) => assess::run(&args, &cli.look),
         Some(Command::Interview(args)) => interview::run(&args, &cli.look),
+        Some(Command::Compare(args)) => compare::run(&args, &cli.look),
+        Some(Command::Fleet(args)) => fleet::run(&args, &cli.look),
         Some(Command::Climate(command)) => climate::run(&command, &cli.look),
         Some(Command::Oil(args)) => oil::run(&args, &cli.look),
     };

@@ -3,7 +3,7 @@
 
 use super::card::{Card, card};
 use super::chart::{self, esc};
-use super::document::{Block, Line, Tone};
+use super::document::{Block, Document, Line, Tone};
 use crate::advice::{Advice, Signal};
 use crate::case::{Case, Units};
 use crate::oil::Oil;
@@ -26,6 +26,20 @@ pub fn html(case: &Case, advice: &Advice, units: Units) -> String {
     charts(&mut out, case, advice, units);
     out.push_str(SIGNED);
     out.push_str("</main>\n</body>\n</html>\n");
+    out
+}
+
+/// Any document as a page of its own.
+#[must_use]
+pub fn page(title: &str, document: &Document) -> String {
+    let mut out = format!(
+        "<!DOCTYPE html>\n<html lang=\"en\">\n<head>\n<meta charset=\"utf-8\">\n<title>{}</title>\n<style>\n{STYLE}</style>\n</head>\n<body>\n",
+        esc(title)
+    );
+    for block in &document.blocks {
+        put(&mut out, block);
+    }
+    out.push_str("</body>\n</html>\n");
     out
 }
 
