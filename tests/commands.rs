@@ -471,3 +471,29 @@ fn two_cases_are_compared() {
     assert_eq!(out.matches("Nothing.").count(), 2, "{out}");
     std::fs::remove_dir_all(&folder).unwrap();
 }
+
+#[test]
+fn schemas_and_completions() {
+    let schema = json(&run(&["schema", "case"]));
+    let validator = jsonschema::draft7::new(&schema).unwrap();
+    for entry in std::fs::read_dir("examples").unwrap() {
+        let path = entry.unwrap().path();
+        if path.extension().is_none_or(|end| end != "toml") {
+            continue;
+        }
+        let table: toml::Table = toml::from_str(&std::fs::read_to_string(&path).unwrap()).unwrap();
+        let value = serde_json::to_value(&table).unwrap();
+        let errors: Vec<String> =
+            validator.iter_errors(&value).map(|e| format!("{}: {e}", e.instance_path())).collect();
+        assert!(errors.is_empty(), "{}: {errors:?}", path.display());
+    }
+    let wrong = serde_json::json!({ "format": 1, "pump": { "knd": "vane" } });
+    assert!(!validator.is_valid(&wrong));
+    let advice = text(&run(&["schema"]).stdout);
+    assert_eq!(advice, std::fs::read_to_string("src/report/advice.schema.json").unwrap());
+    for shell in ["bash", "zsh", "fish", "powershell"] {
+        let output = run(&["completions", shell]);
+        assert_eq!(output.status.code(), Some(0));
+        assert!(text(&output.stdout).contains("interview"), "{shell}");
+    }
+}

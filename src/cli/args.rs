@@ -89,6 +89,15 @@ In it: Esc goes back, `?` is I don't know, Ctrl-C leaves with everything saved."
     /// Sites and their cold
     #[command(subcommand)]
     Climate(ClimateCommand),
+    /// The JSON Schema of a case file or of the advice
+    #[command(after_help = "Examples:
+  coldsump schema case > case.schema.json      for editors: `#:schema case.schema.json`
+  coldsump schema advice")]
+    Schema(SchemaArgs),
+    /// Completions for a shell
+    #[command(after_help = "Example:
+  coldsump completions bash > ~/.local/share/bash-completion/completions/coldsump")]
+    Completions(CompletionsArgs),
     /// One oil over temperature
     #[command(after_help = "Examples:
   coldsump oil HM-46 --at \"-40..100 °C by 10\"
@@ -124,6 +133,26 @@ pub(crate) struct InterviewArgs {
     /// Units of the advice
     #[arg(long, value_enum)]
     pub(crate) units: Option<UnitsArg>,
+}
+
+#[derive(Debug, Clone, Copy, PartialEq, Eq, ValueEnum)]
+pub(crate) enum SchemaOf {
+    Case,
+    Advice,
+}
+
+#[derive(Debug, Args)]
+pub(crate) struct SchemaArgs {
+    /// Of what
+    #[arg(value_enum, default_value = "advice")]
+    pub(crate) of: SchemaOf,
+}
+
+#[derive(Debug, Args)]
+pub(crate) struct CompletionsArgs {
+    /// The shell
+    #[arg(value_enum)]
+    pub(crate) shell: clap_complete::Shell,
 }
 
 #[derive(Debug, Args)]

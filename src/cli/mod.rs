@@ -11,7 +11,7 @@ mod oil;
 mod output;
 
 use args::{Cli, Command};
-use clap::Parser;
+use clap::{CommandFactory, Parser};
 use std::process::ExitCode;
 
 /// Advice given, and a plan starts the machine.
@@ -45,6 +45,12 @@ pub(crate) fn main() -> ExitCode {
         Some(Command::Advise(args)) => advise::run(&args, &cli.look),
         Some(Command::Assess(args)) => assess::run(&args, &cli.look),
         Some(Command::Interview(args)) => interview::run(&args, &cli.look),
+        Some(Command::Schema(args)) => schema(args.of),
+        Some(Command::Completions(args)) => {
+            let mut out = Vec::new();
+            clap_complete::generate(args.shell, &mut Cli::command(), "coldsump", &mut out);
+            output::put(&String::from_utf8_lossy(&out)).map(|()| DONE)
+        }
         Some(Command::Compare(args)) => compare::run(&args, &cli.look),
         Some(Command::Fleet(args)) => fleet::run(&args, &cli.look),
         Some(Command::Climate(command)) => climate::run(&command, &cli.look),
@@ -59,6 +65,17 @@ pub(crate) fn main() -> ExitCode {
             ExitCode::from(FAILED)
         }
     }
+}
+
+fn schema(of: args::SchemaOf) -> anyhow::Result<u8> {
+    match of {
+        args::SchemaOf::Advice => output::put(coldsump::report::ADVICE_SCHEMA)?,
+        args::SchemaOf::Case => {
+            let text = serde_json::to_string_pretty(&coldsump::report::case_schema())?;
+            output::put(&format!("{text}\n"))?;
+        }
+    }
+    Ok(DONE)
 }
 
 fn closed_pipe(error: &anyhow::Error) -> bool {
