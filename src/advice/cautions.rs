@@ -360,7 +360,7 @@ pub(super) static TRIGGERS: &[Trigger] = &[
         find: |scene| {
             heated(scene)?;
             (scene.oil.estimate(scene.found.tank_soak_c).reach == Reach::BelowPour)
-                .then(|| "the tank starts within 5 K of the pour point".into())
+                .then(|| "the tank starts within 5 K (9 °F) of the pour point".into())
         },
     },
     Trigger {

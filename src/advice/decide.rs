@@ -32,6 +32,12 @@ pub struct Choice {
 }
 
 impl Decision {
+    /// A tank heater would start it, were there a circuit that carries it.
+    #[must_use]
+    pub fn lacks_circuit(&self) -> bool {
+        lacks_circuit(&self.plans)
+    }
+
     /// The plan chosen.
     #[must_use]
     pub fn chosen(&self) -> Option<&Plan> {
@@ -233,6 +239,14 @@ fn choose(case: &Case, oils: &[Assessment], plans: &[Plan], in_service: Option<u
     Choice { plan: Some(at), switch_on, why }
 }
 
+fn lacks_circuit(plans: &[Plan]) -> bool {
+    plans.iter().any(|plan| {
+        matches!(plan.kind, PlanKind::Heat | PlanKind::ChangeAndHeat)
+            && !plan.why.is_empty()
+            && plan.why.iter().all(|reason| reason.id == "circuit-too-small")
+    })
+}
+
 /// Why the plan wins within its group.
 fn because(case: &Case, oils: &[Assessment], plans: &[Plan], at: usize) -> Vec<Reason> {
     let Some(plan) = plans.get(at) else { return Vec::new() };
@@ -272,7 +286,12 @@ fn because(case: &Case, oils: &[Assessment], plans: &[Plan], at: usize) -> Vec<R
         }),
         PlanKind::WholeMachineHeat | PlanKind::KeepRunning => why.push(Reason {
             id: "nothing-else",
-            text: "no oil and no tank heater starts it here".into(),
+            text: if lacks_circuit(plans) {
+                "no oil starts it cold, and the circuit does not carry the tank heater that would"
+            } else {
+                "no oil and no tank heater starts it here"
+            }
+            .into(),
         }),
     }
     let low = found.low_at_max;

@@ -111,7 +111,6 @@ pub(super) fn first_turn(
     };
     turn.vacuum_at_gate_kpa =
         setup.inlet_kpa(Edge::Thick, start_rpm, gate).map(|inlet| setup.atmosphere_kpa - inlet);
-    turn.speed_max_rpm = speed_at(gate);
     let to = work_floor.unwrap_or(setup.case.policy.limits.search_to_c).max(gate);
     let mut t = gate;
     while t <= to + 1e-9 {
@@ -122,6 +121,13 @@ pub(super) fn first_turn(
         }
         t = ((t / 5.0).floor() + 1.0) * 5.0;
     }
+    // Thinning oil may turn turbulent and cost speed again: a step holds from there up.
+    let mut least = f64::INFINITY;
+    for step in turn.speed_ladder.iter_mut().rev() {
+        least = least.min(step.speed_max_rpm);
+        step.speed_max_rpm = least;
+    }
+    turn.speed_max_rpm = turn.speed_ladder.first().map(|step| step.speed_max_rpm);
     turn
 }
 

@@ -400,16 +400,8 @@ pub(super) fn heating(
         fails.push(HeatingWhy::SkinTooHot);
     }
 
-    let supply = case.supply.map(|supply| heat::Circuit {
-        volts: supply.voltage.as_volts(),
-        amperes: supply.current.as_amperes(),
-        three_phase: supply.three_phase,
-        other_w: supply.other_load.as_watts(),
-    });
-    let delivered = match (supply, element.rated_voltage) {
-        (Some(circuit), Some(rated)) => heat::delivered_share(circuit.volts, rated.as_volts()),
-        _ => 1.0,
-    };
+    let supply = circuit(case);
+    let delivered = delivered(case, supply);
     let carried = supply.map_or(f64::INFINITY, |circuit| circuit.continuous_w(policy));
     let flat_m2 = case.reservoir.flat_surface.as_m2();
     let surface_w = if pad { heat::pad_most_w(flat_m2, policy) } else { f64::INFINITY };
@@ -504,6 +496,24 @@ pub(super) fn heating(
         }
     }
     heating
+}
+
+/// The circuit there is.
+pub(super) fn circuit(case: &Case) -> Option<heat::Circuit> {
+    case.supply.map(|supply| heat::Circuit {
+        volts: supply.voltage.as_volts(),
+        amperes: supply.current.as_amperes(),
+        three_phase: supply.three_phase,
+        other_w: supply.other_load.as_watts(),
+    })
+}
+
+/// Delivered over rated power of the element on that circuit.
+pub(super) fn delivered(case: &Case, circuit: Option<heat::Circuit>) -> f64 {
+    match (circuit, case.element.rated_voltage) {
+        (Some(circuit), Some(rated)) => heat::delivered_share(circuit.volts, rated.as_volts()),
+        _ => 1.0,
+    }
 }
 
 /// An element gives at most so many times its rated power: 10 % over its voltage.

@@ -1,11 +1,11 @@
 //! Plans: the ways to get one oil started, each with its figures, and why it is not allowed.
 
 use super::assess::{Assessment, Verdict};
-use super::heating::{HeatingStatus, HeatingWhy};
+use super::heating::{self, HeatingStatus, HeatingWhy};
 use super::limits::Side;
 use super::say::{Figure, Reason};
 use crate::case::Case;
-use crate::heat::{self, Chosen, Circuit, Wanted};
+use crate::heat::{self, Chosen, Wanted};
 use crate::source::{Method, Source};
 use crate::words::words;
 
@@ -90,7 +90,7 @@ pub(super) fn plans_of(case: &Case, at: usize, found: &Assessment, kept: bool) -
     }
     let asked = !matches!(found.heating.status, HeatingStatus::NotNeeded);
     if asked && (suited || kept) {
-        plans.push(heat_tank(at, found, kept, suited));
+        plans.push(heat_tank(case, at, found, kept, suited));
         if found.heating.hold_w.is_some() {
             plans.push(hold(case, at, found, suited));
         }
@@ -187,7 +187,7 @@ fn start_warm(case: &Case, at: usize, found: &Assessment, suited: bool) -> Plan 
     plan
 }
 
-fn heat_tank(at: usize, found: &Assessment, kept: bool, suited: bool) -> Plan {
+fn heat_tank(case: &Case, at: usize, found: &Assessment, kept: bool, suited: bool) -> Plan {
     let heating = &found.heating;
     let mut plan = plan(if kept { PlanKind::Heat } else { PlanKind::ChangeAndHeat }, at);
     plan.allowed = suited && heating.status == HeatingStatus::Sized;
@@ -197,8 +197,8 @@ fn heat_tank(at: usize, found: &Assessment, kept: bool, suited: bool) -> Plan {
     plan.energy_kwh = heating.energy_kwh;
     plan.ready_s = heating.time_s;
     plan.why.extend(forbidding(found).cloned());
-    plan.why
-        .extend(heating.whys.iter().map(|why| Reason { id: why.id(), text: why.text().into() }));
+    let wanted = heating.heater_w.unwrap_or(0.0);
+    plan.why.extend(heating.whys.iter().map(|why| because(case, *why, wanted)));
     if plan.allowed && heating.tight {
         plan.why.push(Reason {
             id: "tight",
@@ -206,6 +206,24 @@ fn heat_tank(at: usize, found: &Assessment, kept: bool, suited: bool) -> Plan {
         });
     }
     plan
+}
+
+/// Why a heater of so many watts, rated, cannot be; a circuit that does not carry it with its
+/// figures.
+fn because(case: &Case, why: HeatingWhy, wanted_w: f64) -> Reason {
+    let circuit = heating::circuit(case).filter(|_| why == HeatingWhy::CircuitTooSmall);
+    let Some(circuit) = circuit else { return Reason { id: why.id(), text: why.text().into() } };
+    let drawn = wanted_w * heating::delivered(case, Some(circuit));
+    let carried = circuit.continuous_w(&case.policy.heat);
+    let mut figures =
+        vec![("drawn", Figure::Power(drawn).into()), ("carried", Figure::Power(carried).into())];
+    let text = if circuit.other_w > 0.0 {
+        figures.push(("other", Figure::Power(circuit.other_w).into()));
+        "{drawn} are wanted, and for hours the circuit carries {carried} beside {other} of other load"
+    } else {
+        "{drawn} are wanted, and for hours the circuit carries {carried}"
+    };
+    Reason::new(why.id(), text, &figures)
 }
 
 /// A blanket, and a small heater through the night.
@@ -236,18 +254,10 @@ fn hold(case: &Case, at: usize, found: &Assessment, suited: bool) -> Plan {
     ];
     let fails: Vec<HeatingWhy> =
         heating.whys.iter().copied().filter(|why| kept_out.contains(why)).collect();
-    plan.why.extend(fails.iter().map(|why| Reason { id: why.id(), text: why.text().into() }));
+    plan.why.extend(fails.iter().map(|why| because(case, *why, 0.0)));
     plan.allowed = suited && fails.is_empty();
-    let circuit = case.supply.map(|supply| Circuit {
-        volts: supply.voltage.as_volts(),
-        amperes: supply.current.as_amperes(),
-        three_phase: supply.three_phase,
-        other_w: supply.other_load.as_watts(),
-    });
-    let delivered = match (circuit, case.element.rated_voltage) {
-        (Some(circuit), Some(rated)) => heat::delivered_share(circuit.volts, rated.as_volts()),
-        _ => 1.0,
-    };
+    let circuit = heating::circuit(case);
+    let delivered = heating::delivered(case, circuit);
     let pad = case.element.kind == heat::ElementKind::Pad;
     let sizes: Vec<f64> = case.heater_sizes.iter().map(|size| size.as_watts()).collect();
     let least = policy.loss_uncertainty * held;
@@ -265,10 +275,10 @@ fn hold(case: &Case, at: usize, found: &Assessment, suited: bool) -> Plan {
             delivered,
         },
     );
-    let mut fail = |why: HeatingWhy| {
+    let mut fail = |why: HeatingWhy, wanted: f64| {
         plan.allowed = false;
         if !plan.why.iter().any(|reason| reason.id == why.id()) {
-            plan.why.push(Reason { id: why.id(), text: why.text().into() });
+            plan.why.push(because(case, why, wanted));
         }
     };
     match chosen {
@@ -277,12 +287,13 @@ fn hold(case: &Case, at: usize, found: &Assessment, suited: bool) -> Plan {
             plan.elements_w = elements;
         }
         Chosen::CircuitTooSmall { elements } => {
-            fail(HeatingWhy::CircuitTooSmall);
-            plan.heater_w = Some(elements.iter().sum());
+            let wanted = elements.iter().sum();
+            fail(HeatingWhy::CircuitTooSmall, wanted);
+            plan.heater_w = Some(wanted);
             plan.elements_w = elements;
         }
-        Chosen::SurfaceTooSmall => fail(HeatingWhy::SurfaceTooSmall),
-        Chosen::NoSize => fail(HeatingWhy::NoHeaterSize),
+        Chosen::SurfaceTooSmall => fail(HeatingWhy::SurfaceTooSmall, 0.0),
+        Chosen::NoSize => fail(HeatingWhy::NoHeaterSize, 0.0),
     }
     if !covered {
         plan.why.push(Reason::new(

@@ -117,10 +117,10 @@ impl Page<'_> {
                 .strong(format!("Cover the tank and hold {name} warm through the night.")),
             PlanKind::WholeMachineHeat => Line::new()
                 .strong("Keep the whole machine warm: shelter or hot air.")
-                .words(" No oil and no tank heater starts it here."),
-            PlanKind::KeepRunning => Line::new()
-                .strong("Do not switch it off in this cold.")
-                .words(" No oil and no tank heater starts it here."),
+                .words(self.nothing_else()),
+            PlanKind::KeepRunning => {
+                Line::new().strong("Do not switch it off in this cold.").words(self.nothing_else())
+            }
         };
         let unproven = decision
             .oils
@@ -130,6 +130,14 @@ impl Page<'_> {
             line.words(" The pump inlet was not checked: prove it with a vacuum gauge, or measure the suction hose (outside diameter, length) and work this out again.")
         } else {
             line
+        }
+    }
+
+    fn nothing_else(&self) -> &'static str {
+        if self.advice.decision.lacks_circuit() {
+            " No oil starts it cold, and the circuit does not carry the tank heater that would."
+        } else {
+            " No oil and no tank heater starts it here."
         }
     }
 
@@ -596,6 +604,7 @@ impl Page<'_> {
     }
 
     fn confirm(&self, blocks: &mut Vec<Block>) {
+        super::assessment::policy(blocks, self.case, self.shown);
         if self.advice.confirm.is_empty() {
             return;
         }
@@ -608,8 +617,8 @@ impl Page<'_> {
     fn assumed(&self, at: usize, confirm: &Confirm) -> Line {
         let one = &confirm.assumption;
         let base = format!("/assumptions/{at}");
-        let mut line =
-            Line::from(format!("{}: ", one.key)).figure(one.value.clone(), format!("{base}/value"));
+        let mut line = Line::from(format!("{}: ", one.key))
+            .figure(self.shown.input(&one.key, &one.value), format!("{base}/value"));
         if confirm.governs {
             line = line.strong(", a floor hangs on it");
         }
@@ -634,11 +643,11 @@ impl Page<'_> {
                 };
                 line = end(line.words(format!("; {name} from ")), ends[0], "from_c")
                     .words(" with ")
-                    .figure(range.from.clone(), format!("{base}/range/from"))
+                    .figure(self.shown.input(&one.key, &range.from), format!("{base}/range/from"))
                     .words(", ");
                 line = end(line, ends[1], "to_c")
                     .words(" with ")
-                    .figure(range.to.clone(), format!("{base}/range/to"));
+                    .figure(self.shown.input(&one.key, &range.to), format!("{base}/range/to"));
             }
         }
         let find =

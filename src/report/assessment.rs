@@ -3,7 +3,7 @@
 use super::document::{Block, Document, Line};
 use super::units::{Shown, fixed};
 use crate::advice::{Assessment, Floor, HeatingStatus, LimitResult, Outcome};
-use crate::case::{Assumption, Case, Units};
+use crate::case::{Assumption, Case, From, POLICY, Units};
 use crate::heat::HeatPolicy;
 use crate::oil::Oil;
 
@@ -16,6 +16,7 @@ pub fn assessment(case: &Case, oils: &[(&Oil, Assessment)], units: Units) -> Doc
     for (index, (oil, found)) in oils.iter().enumerate() {
         one_oil(&mut blocks, case, (oil, found), &format!("/oils/{index}"), shown);
     }
+    policy(&mut blocks, case, shown);
     if !case.assumptions.is_empty() {
         blocks.push(Block::Heading(Line::from("Assumed - confirm")));
         // Those that a floor hangs on first.
@@ -23,8 +24,10 @@ pub fn assessment(case: &Case, oils: &[(&Oil, Assessment)], units: Units) -> Doc
         let mut rows: Vec<_> = case.assumptions.iter().enumerate().collect();
         rows.sort_by_key(|(_, assumption)| !governs(&assumption.key));
         let line = |(at, assumption): (usize, &Assumption)| {
-            let mut line = Line::from(format!("{}: ", assumption.key))
-                .figure(assumption.value.clone(), format!("/assumptions/{at}/value"));
+            let mut line = Line::from(format!("{}: ", assumption.key)).figure(
+                shown.input(&assumption.key, &assumption.value),
+                format!("/assumptions/{at}/value"),
+            );
             if governs(&assumption.key) {
                 line = line.strong(", a floor hangs on it");
             }
@@ -43,6 +46,29 @@ pub fn assessment(case: &Case, oils: &[(&Oil, Assessment)], units: Units) -> Doc
          machine's manual, local codes and a licensed electrician come before this page.",
     )));
     Document { blocks }
+}
+
+/// The figures of judgement that this case sets otherwise.
+pub(super) fn policy(blocks: &mut Vec<Block>, case: &Case, shown: Shown) {
+    let set: Vec<Line> = case
+        .inputs
+        .iter()
+        .enumerate()
+        .filter(|(_, input)| input.from == From::Policy)
+        .filter_map(|(at, input)| {
+            let row = POLICY.iter().find(|row| row.path == input.key)?;
+            let default = shown.input(row.path, row.example.trim_matches('"'));
+            Some(
+                Line::from(format!("{}: ", row.path))
+                    .figure(shown.input(row.path, &input.value), format!("/inputs/{at}/value"))
+                    .words(format!(" instead of {default}: {}", row.about)),
+            )
+        })
+        .collect();
+    if !set.is_empty() {
+        blocks.push(Block::Heading(Line::from("Judgement set by this case")));
+        blocks.push(Block::List(set));
+    }
 }
 
 fn site(case: &Case, shown: Shown) -> Vec<(String, Line)> {
@@ -310,6 +336,12 @@ fn first_turn(
                 .words(" at first"),
         ));
     }
+    if found.at_soak.high.is_none() {
+        pairs.push((
+            "cold oil in the hose".to_owned(),
+            Line::from("may be gel: jog without fuel and warm the line; case pressure not known"),
+        ));
+    }
     if let (Some(vacuum), Some(speed)) = (turn.vacuum_at_gate_kpa, turn.speed_max_rpm) {
         pairs.push((
             format!("{} over that floor", shown.difference(policy.gate_margin_k).replace(".0", "")),
@@ -350,7 +382,7 @@ fn first_turn(
 fn limit(result: &LimitResult, pointer: &str, shown: Shown) -> Vec<Line> {
     let temperature = |outcome: Outcome| match outcome {
         Outcome::At(t) => shown.temperature(t),
-        Outcome::NeverBites { .. } => "never bites".to_owned(),
+        Outcome::NeverBites { to } => format!("under {}", shown.temperature(to)),
         Outcome::Unattainable(_) => "unattainable".to_owned(),
         Outcome::NotChecked(_) => "not checked".to_owned(),
     };

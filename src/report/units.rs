@@ -2,6 +2,27 @@
 
 use crate::advice::{Figure, Part, Say};
 use crate::case::Units;
+use crate::case::keys::{self, KeyKind};
+use crate::quantity::{Quantity as _, Temperature};
+
+/// Units of a case and the US units they are shown in.
+const US_UNITS: &[(&str, &str)] = &[
+    ("°C", "°F"),
+    ("K", "°F"),
+    ("kPa", "psi"),
+    ("mm", "in"),
+    ("m", "ft"),
+    ("m²", "ft²"),
+    ("L", "gal"),
+    ("cm³", "in³"),
+    ("kg", "lb"),
+    ("kg/m³", "lb/ft³"),
+    ("L/min", "gpm"),
+    ("m/s", "mph"),
+    ("W/(m²·K)", "Btu/(h·ft²·°F)"),
+    ("W/K", "Btu/(h·°F)"),
+    ("W/cm²", "W/in²"),
+];
 
 /// Shows figures in one set of units.
 #[derive(Debug, Clone, Copy)]
@@ -45,6 +66,24 @@ impl Shown {
                 Part::Figure { figure, .. } => self.figure(*figure),
             })
             .collect()
+    }
+
+    /// The value of a case key as people read it: three figures, in the units asked for. What is
+    /// not a quantity stands as it is.
+    #[must_use]
+    pub fn input(self, key: &str, text: &str) -> String {
+        let kind = match keys::find(key).map(|key| key.kind) {
+            Some(KeyKind::Quantity(kind)) => kind,
+            Some(KeyKind::Minimum) => Temperature::KIND,
+            _ => return text.to_owned(),
+        };
+        let Ok(value) = kind.read(text) else { return text.to_owned() };
+        let us = US_UNITS.iter().find(|(metric, _)| self.us() && *metric == kind.unit);
+        let unit = us.map_or(kind.unit, |(_, us)| *us);
+        match kind.in_unit(value, unit) {
+            Some(value) => format!("{} {unit}", three_figures(value)),
+            None => text.to_owned(),
+        }
     }
 
     /// A small length in mm.
@@ -114,10 +153,16 @@ impl Shown {
         }
     }
 
-    /// A vacuum in kPa, with inHg.
+    /// A vacuum in kPa and inHg; under zero it is pressure.
     #[must_use]
     pub fn vacuum(self, kpa: f64) -> String {
-        format!("{} kPa ({} inHg)", fixed(kpa, 1), fixed(kpa / 3.386_389, 1))
+        let (si, us) = (fixed(kpa.abs(), 1), fixed(kpa.abs() / 3.386_389, 1));
+        let both = if self.us() {
+            format!("{us} inHg ({si} kPa)")
+        } else {
+            format!("{si} kPa ({us} inHg)")
+        };
+        if kpa < 0.0 { format!("none, {both} over the air outside") } else { both }
     }
 
     /// A time in s, as hours and minutes.
@@ -185,6 +230,16 @@ pub(super) fn trimmed(value: f64, decimals: usize) -> String {
     } else {
         text
     }
+}
+
+/// A number to three significant figures.
+fn three_figures(value: f64) -> String {
+    if value == 0.0 {
+        return "0".to_owned();
+    }
+    let after = 2 - value.abs().log10().floor() as i32;
+    let unit = 10_f64.powi(-after);
+    trimmed((value / unit).round() * unit, after.max(0) as usize)
 }
 
 /// An energy in kWh.

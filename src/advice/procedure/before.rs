@@ -20,7 +20,7 @@ pub(super) fn season(scene: &Scene<'_>) -> Vec<Step> {
     hoses(scene, &mut steps);
     oil(scene, &mut steps);
     steps.push(step(
-        "Fit a vacuum gauge that reads to {vacuum} on a tee at the pump's suction port, and a probe in the oil at the tank's suction fitting that reads down to {soak} or colder. A dial that ends at 0 °C or -5 °C is no use here.",
+        "Fit a vacuum gauge that reads to {vacuum} on a tee at the pump's suction port, and a probe in the oil at the tank's suction fitting that reads down to {soak} or colder. A dial that ends at freezing or a little under it is no use here.",
         &[
             ("vacuum", Vacuum((scene.vacuum_limit_kpa() * 1.5).max(30.0)).into()),
             ("soak", soak.into()),
