@@ -471,7 +471,12 @@ fn whole_advice(case: &Case) -> Result<(), String> {
     if text.contains("NaN") || text.contains("inf,") {
         return Err("no number in the JSON".to_owned());
     }
-    report::advice(case, &advice, case.units);
+    let document = report::advice(case, &advice, case.units);
+    for line in document.blocks.iter().flat_map(|block| block.lines()) {
+        if line.0.iter().any(|span| span.text.contains("NaN") || span.text.starts_with("inf ")) {
+            return Err(format!("no number on screen: {line:?}"));
+        }
+    }
     Ok(())
 }
 
