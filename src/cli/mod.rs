@@ -56,6 +56,7 @@ pub(crate) fn main() -> ExitCode {
             clap_complete::generate(args.shell, &mut Cli::command(), "coldsump", &mut out);
             output::put(&String::from_utf8_lossy(&out)).map(|()| DONE)
         }
+        Some(Command::Man(args)) => man(args.command.as_deref()),
         Some(Command::Compare(args)) => compare::run(&args, &cli.look),
         Some(Command::Fleet(args)) => fleet::run(&args, &cli.look),
         Some(Command::Climate(command)) => climate::run(&command, &cli.look),
@@ -70,6 +71,28 @@ pub(crate) fn main() -> ExitCode {
             ExitCode::from(FAILED)
         }
     }
+}
+
+/// The manual page, in roff.
+fn man(command: Option<&str>) -> anyhow::Result<u8> {
+    let mut program = Cli::command();
+    program.build();
+    let page = match command {
+        None => program,
+        Some(name) => match program.find_subcommand(name) {
+            Some(found) => found.clone(),
+            None => {
+                let names: Vec<&str> =
+                    program.get_subcommands().map(clap::Command::get_name).collect();
+                tell!("no command `{name}`\n\ntry: {}", names.join(", "));
+                return Ok(WRONG);
+            }
+        },
+    };
+    let mut roff = Vec::new();
+    clap_mangen::Man::new(page).render(&mut roff)?;
+    output::put(&String::from_utf8_lossy(&roff))?;
+    Ok(DONE)
 }
 
 fn schema(of: args::SchemaOf) -> anyhow::Result<u8> {
