@@ -3,6 +3,7 @@
 //! case never gets an easier answer, and US units give the answer of metric ones.
 //!
 //! `CASES=1000000 cargo test --release --test honesty -- --nocapture` draws more; `SEED` others.
+#![cfg(feature = "cli")]
 
 use coldsump::advice::{self, Assessment, Decision, Figure, Outcome, Part};
 use coldsump::case::keys::{self, Key, KeyKind};
