@@ -190,7 +190,7 @@ fn northway_hours() {
     for (share, want) in [(0.004, -44.0), (0.01, -42.7), (0.02, -38.8)] {
         near(gathered.percentile(share).unwrap(), want, 0.05, "percentile");
     }
-    let (site, cautions) = gathered.site("northway", &plain(), "test").unwrap();
+    let (site, cautions) = import.site("northway", "test").unwrap();
     let want = [
         -24.182, -19.796, -11.338, -5.736, 8.281, 12.672, 15.820, 11.435, 2.829, -2.988, -19.386,
         -22.747,
@@ -225,8 +225,7 @@ fn months_by_erbs() {
         near(months::hour_shape(hour), want, 1e-4, "shape of the day");
     }
     // Hours under a base against the hours counted in the file: good to the coldest 1 to 2 %.
-    let (site, _) =
-        imported(&northway(), plain()).unwrap().gathered().site("n", &plain(), "t").unwrap();
+    let (site, _) = imported(&northway(), plain()).unwrap().site("n", "t").unwrap();
     let m = site.monthly.unwrap();
     for (base, counted, off) in [(0.0, 4868.0, 0.1), (-20.0, 1689.0, 0.15), (-30.0, 487.0, 0.2)] {
         let found = months::hours_below(base, &m.mean_c, &m.daily_range_k);
@@ -243,11 +242,13 @@ fn the_three_ghcn_layouts_hold_the_same_days() {
         let import = imported(text, plain()).unwrap();
         assert_eq!(import.layouts()[0].1, layout);
         // 59 values, one of them flagged (the flag is invented for this fixture).
-        assert_eq!(import.dropped().get(&Drop::Flagged), Some(&1));
+        assert_eq!(dropped(&import, Drop::Flagged), 1);
         let gathered = import.gathered();
         assert_eq!(gathered.used(), 58);
         let counts: Vec<u64> = (0..40).map(|t| gathered.below(-f64::from(t))).collect();
-        let (site, _) = gathered.site("x", &plain(), "t").unwrap();
+        let (site, _) = import.site("x", "t").unwrap();
+        // Two months tell the coldest day, and no percentile of a year.
+        assert!(site.minima.percent_99_6.is_none() && site.below.is_empty());
         near(site.minima.record.unwrap().celsius, -33.3, 1e-9, "coldest");
         if let Some(last) = &last {
             assert_eq!(*last, (58, counts.clone()), "{layout:?}");
@@ -258,18 +259,13 @@ fn the_three_ghcn_layouts_hold_the_same_days() {
 
 #[test]
 fn the_order_tool_and_units() {
-    let import = imported(ORDER, plain()).unwrap();
+    let celsius = Options { unit: Some(Unit::Celsius), ..plain() };
+    let import = imported(ORDER, celsius).unwrap();
     assert_eq!(import.layouts()[0].1, Layout::GhcnOrder);
     let gathered = import.gathered();
     assert_eq!((gathered.used(), gathered.below(-30.0), gathered.below(-35.0)), (93, 20, 5));
     near(gathered.percentile(0.0).unwrap(), -38.9, 1e-9, "coldest, 2020-02-08");
-    // The same in °F, asked about where a value cannot be °C, then read as said.
     let fahrenheit = "date,tmin\n2020-01-01,-62\n2020-01-02,5\n";
-    let error = imported(fahrenheit, plain()).unwrap_err().to_string();
-    assert_eq!(
-        error,
-        "record:2: -62 is no minimum in °C; are these °F? say so with --units f, or --units c"
-    );
     let options = Options { unit: Some(Unit::Fahrenheit), ..plain() };
     let import = imported(fahrenheit, options).unwrap();
     near(import.gathered().percentile(1.0).unwrap(), -15.0, 0.01, "5 °F");
@@ -285,65 +281,205 @@ fn epw_tmy3_and_isd() {
     let import = imported(tmy3, plain()).unwrap();
     assert_eq!(import.layouts()[0].1, Layout::Tmy3);
     assert_eq!(import.gathered().used(), 2);
-    assert_eq!(import.dropped().get(&Drop::Missing), Some(&1));
+    assert_eq!(dropped(&import, Drop::Missing), 1);
     let isd = "2018 01 01 06  -150  -180 10132   270    31     0 -9999 -9999\n2018 01 01 07 -9999  -180 10132   270    31     0 -9999 -9999\n";
     let error = imported(isd, plain()).unwrap_err().to_string();
     assert!(error.contains("--utc-offset -9"), "{error}");
     let options = Options { utc_offset: Some(-9.0), ..plain() };
-    let import = imported(isd, options.clone()).unwrap();
+    let import = imported(isd, options).unwrap();
     assert_eq!(import.gathered().used(), 1);
-    let (site, _) = import.gathered().site("x", &options, "t").unwrap();
+    let (site, _) = import.site("x", "t").unwrap();
     // 06:00 UTC on New Year's Day is 21:00 of the old year there.
     assert_eq!(site.period.as_deref(), Some("2017 to 2017"));
+}
+
+fn dropped(import: &Import, why: Drop) -> u64 {
+    import.dropped().get(&why).map_or(0, |dropped| dropped.count)
+}
+
+#[test]
+fn hours_in_a_plain_table() {
+    // The shipped file as it stands: months of different years, joined.
+    let import = imported(NORTHWAY, plain()).unwrap();
+    assert_eq!(import.layouts()[0].1, Layout::Hours);
+    let (site, _) = import.site("n", "t").unwrap();
+    let (same, _) = imported(&northway(), plain()).unwrap().site("n", "t").unwrap();
+    assert_eq!(
+        (site.minima, site.monthly, site.below, site.spell, site.wind, site.cold_day),
+        (same.minima, same.monthly, same.below, same.spell, same.wind, same.cold_day)
+    );
+}
+
+#[test]
+fn part_of_a_year_is_not_taken_for_a_year() {
+    let (site, cautions) = imported(EPW, plain()).unwrap().site("x", "t").unwrap();
+    near(site.minima.record.unwrap().celsius, -46.1, 1.5, "coldest of 48 hours");
+    assert!(site.minima.percent_99.is_none() && site.minima.percent_99_6.is_none());
+    assert!(site.below.is_empty() && site.monthly.is_none() && site.wind.is_none());
+    assert!(cautions.iter().any(|caution| caution.starts_with("under a year of values")));
+    let day = "date,tmin_c\n2020-01-02,-5\n";
+    let (site, _) = imported(day, plain()).unwrap().site("x", "t").unwrap();
+    assert!(site.below.is_empty());
+    // All of a year but its summer is no year either.
+    let winter: String = VALDEZ_DAILY
+        .lines()
+        .filter(|line| !["-06-", "-07-", "-08-"].iter().any(|month| line.contains(month)))
+        .map(|line| format!("{line}\n"))
+        .collect();
+    let (site, _) = imported(&winter, plain()).unwrap().site("x", "t").unwrap();
+    assert!(site.minima.percent_99_6.is_none());
+    assert!(site.winter.len() > 20);
+}
+
+#[test]
+fn one_station_at_a_time() {
+    let two = format!("{ROWS}USW00026616,19470205,TMIN,-300,,,0,2400\n");
+    assert_eq!(
+        imported(&two, plain()).unwrap_err().to_string(),
+        "record:119: station `USW00026616` after station `USW00026442`; say which one, for example --station USW00026442"
+    );
+    let only = |id: &str| Options { station: Some(id.to_owned()), ..plain() };
+    let import = imported(&two, only("USW00026442")).unwrap();
+    assert_eq!((import.gathered().used(), dropped(&import, Drop::OtherStation)), (58, 1));
+    let import = imported(&two, only("USW00026616")).unwrap();
+    assert_eq!(import.gathered().used(), 1);
+    // Nor a second one in a second file.
+    let mut import = imported(ROWS, plain()).unwrap();
+    let other = DLY.replace("USW00026442", "USW00026616");
+    let error = import.file("second", other.as_bytes(), |_| ()).unwrap_err().to_string();
+    assert!(error.starts_with("second:1: station `USW00026616` after"), "{error}");
+    // The same station again adds nothing, and is no contradiction.
+    let mut import = imported(ROWS, plain()).unwrap();
+    import.file("second", DLY.as_bytes(), |_| ()).unwrap();
+    assert_eq!((import.gathered().used(), dropped(&import, Drop::Duplicate)), (58, 58));
+}
+
+#[test]
+fn a_unit_is_told_or_asked_for() {
+    let told = |unit| Options { unit: Some(unit), ..plain() };
+    let asked = "the unit of `TMIN` is not in the file; say --units c or --units f";
+    assert_eq!(imported(ORDER, plain()).unwrap_err().to_string(), format!("record:1: {asked}"));
+    assert_eq!(
+        imported("date,tmin\n2001-01-01,-20\n", plain()).unwrap_err().to_string(),
+        "record:1: the unit of `tmin` is not in the file; say --units c or --units f"
+    );
+    assert_eq!(
+        imported("date,tmin_c\n2001-01-01,-20\n", told(Unit::Fahrenheit)).unwrap_err().to_string(),
+        "record:1: `tmin_c` names another unit than --units; leave --units out"
+    );
+    assert_eq!(
+        imported(ROWS, told(Unit::Fahrenheit)).unwrap_err().to_string(),
+        "record:1: is read as GHCN-Daily, one value a row, tenths of °C, which is in °C; leave --units out"
+    );
+    // With attributes: integers are tenths of °C, or whole °F where that is told.
+    let table = |values: &[&str]| {
+        let mut text = String::from("\"STATION\",\"DATE\",\"TMIN\",\"TMIN_ATTRIBUTES\"\n");
+        for (at, value) in values.iter().enumerate() {
+            text += &format!("\"X\",\"2001-01-{:02}\",\"{value}\",\",,W\"\n", at + 1);
+        }
+        text
+    };
+    let coldest = |text: &str, options: Options| {
+        imported(text, options).map(|import| import.gathered().percentile(0.0).unwrap())
+    };
+    near(coldest(&table(&["-333", "-20"]), plain()).unwrap(), -33.3, 1e-9, "tenths");
+    near(coldest(&table(&["-41", "-20"]), told(Unit::Fahrenheit)).unwrap(), -40.56, 0.01, "°F");
+    near(coldest(&table(&["-33.3", "-20.0"]), told(Unit::Celsius)).unwrap(), -33.3, 1e-9, "°C");
+    let doubt = coldest(&table(&["-41", "-20"]), plain()).unwrap_err().to_string();
+    assert_eq!(doubt, format!("record: {asked}"));
+    let mixed = coldest(&table(&["-333", "-20.5"]), plain()).unwrap_err().to_string();
+    assert_eq!(
+        mixed,
+        "record:3: `-20.5` has a decimal point, other than the values before it: tenths and whole degrees are mixed"
+    );
+    // Tenths taken for degrees: most are no temperature of the air.
+    let tenths = "date,tmin_c\n2001-01-01,-200\n2001-01-02,-210\n2001-01-03,-333\n2001-01-04,-20\n";
+    assert_eq!(
+        imported(tenths, plain()).unwrap().site("x", "t").unwrap_err(),
+        "3 readings lie outside -90 to 60 °C, 1 inside: the unit is not what the file or --units says (tenths of a degree?)"
+    );
 }
 
 #[test]
 fn damaged_records() {
     let cut = DLY.get(..100).unwrap();
     let import = imported(cut, plain()).unwrap();
-    assert!(import.dropped().get(&Drop::CutLine).is_some_and(|count| *count > 20));
+    assert!(dropped(&import, Drop::CutLine) > 20);
     assert!(import.gathered().used() > 5);
     // A byte-order mark and CRLF.
     let marked = format!("\u{feff}{}", ROWS.replace('\n', "\r\n"));
     assert_eq!(imported(&marked, plain()).unwrap().gathered().used(), 58);
-    // Days that are none, twice, and not sorted.
-    let odd = "USW00026442,20230229,TMIN,-100,,,0,\nUSW00026442,20240229,TMIN,-100,,,0,\nUSW00026442,20240229,TMIN,-90,,,0,\nUSW00026442,20240101,TMIN,-2000,,,0,\n";
-    let import = imported(odd, plain()).unwrap();
+    // Days that are none, twice the same, not sorted, not possible.
+    let odd: String =
+        ["20230229,TMIN,-100", "20240229,TMIN,-100", "20240229,TMIN,-100", "20240101,TMIN,-2000"]
+            .iter()
+            .map(|row| format!("USW00026442,{row},,,0,\n"))
+            .collect();
+    let import = imported(&odd, plain()).unwrap();
     assert_eq!(import.gathered().used(), 1);
-    for drop in [Drop::NoDate, Drop::Duplicate, Drop::Impossible] {
-        assert_eq!(import.dropped().get(&drop), Some(&1), "{drop:?}");
+    for why in [Drop::NoDate, Drop::Duplicate, Drop::Impossible] {
+        assert_eq!(dropped(&import, why), 1, "{why:?}");
     }
-    let maximum = "\"STATION\",\"DATE\",\"TMAX\",\"TMIN\"\n\"X\",\"1897-10-15\",\"0.6\",\"3.3\"\n";
-    let import = imported(maximum, plain()).unwrap();
-    assert_eq!(import.dropped().get(&Drop::MaximumUnderMinimum), Some(&1));
+    assert_eq!(import.dropped()[&Drop::Duplicate].line, 3);
+    // A maximum under the minimum: the minimum is kept, it may be the coldest there is.
+    let maximum =
+        "\"STATION\",\"DATE\",\"TMAX\",\"TMIN\"\n\"X\",\"1897-12-30\",\"-27.8\",\"-16.7\"\n";
+    let import = imported(maximum, Options { unit: Some(Unit::Celsius), ..plain() }).unwrap();
+    assert_eq!((import.gathered().used(), dropped(&import, Drop::MaximumUnderMinimum)), (1, 1));
+    // Lines that end early are counted, and never half used.
+    let short = |text: &str, line: usize, keep: usize| {
+        let whole = text.lines().nth(line - 1).unwrap();
+        text.replacen(whole, &whole[..keep], 1)
+    };
+    for (text, line, keep) in [(EPW, 12, 60), (STATION, 3, 60), (NORTHWAY, 3, 12), (ROWS, 4, 25)] {
+        let whole = imported(text, plain()).unwrap().gathered().used();
+        let import = imported(&short(text, line, keep), plain()).unwrap();
+        assert_eq!(dropped(&import, Drop::CutLine), 1, "line {line} of {}", &text[..20]);
+        assert_eq!(import.gathered().used(), whole - 1);
+        assert_eq!(import.dropped()[&Drop::CutLine].line, line as u64);
+    }
+    let layouts = "record: is in no layout known here; it takes GHCN-Daily (.dly, by-year rows, per-station CSV, order-tool CSV), EPW, TMY3 CSV, ISD-Lite, a CSV with the columns date and tmin_c, or one of hours with year, month, day, hour and drybulb_c";
     for (text, want) in [
         (
-            "date,tmin\n2020-01-02,-5\n2020-01-01,-6\n",
+            "date,tmin_c\n2020-01-02,-5\n2020-01-01,-6\n",
             "record:3: the day 2020-01-01 comes after a later one; sort the file by date",
         ),
         (
-            "date,tmin\n2020-01-02,-5\n2020-01-02,-6\n",
+            "date,tmin_c\n2020-01-02,-5\n2020-01-02,-6\n",
             "record:3: the day 2020-01-02 stands twice in a row",
         ),
         (
-            "date,tmin\n2020-13-02,-5\n",
+            "date,tmin_c\n2020-13-02,-5\n",
             "record:2: `2020-13-02` is no date; write for example 1998-01-31",
         ),
         (
-            "date,tmin\n2020-01-02,cold\n",
+            "date,tmin_c\n1900-02-29,-5\n",
+            "record:2: `1900-02-29` is no date; write for example 1998-01-31",
+        ),
+        (
+            "date,tmin_c\n2020-01-02,cold\n",
             "record:2: `cold` is no temperature; write a plain number",
         ),
         (
-            "hello\nworld\n",
-            "record: is in no layout known here; it takes GHCN-Daily (.dly, by-year rows, per-station CSV, order-tool CSV), EPW, TMY3 CSV, ISD-Lite, or a CSV with the columns date and tmin",
+            "date,tmin_c\n2020-01-02,nan\n",
+            "record:2: `nan` is no temperature; write a plain number",
         ),
         (
-            "",
-            "record: is in no layout known here; it takes GHCN-Daily (.dly, by-year rows, per-station CSV, order-tool CSV), EPW, TMY3 CSV, ISD-Lite, or a CSV with the columns date and tmin",
+            "USW00026442,19470205,TMIN,-300,,,0,2400\nUSW00026442,19470205,TMIN,-333,,,0,2400\n",
+            "record:2: 1947-02-05 has two values, -30 °C and -33.3 °C; take one of them out",
         ),
+        ("hello\nworld\n", layouts),
+        ("", layouts),
     ] {
         assert_eq!(imported(text, plain()).unwrap_err().to_string(), want);
     }
+    // Nonsense under a right header is given up early.
+    let nonsense = format!("{ROWS}{}", "USW00026442,no\n".repeat(5000));
+    let error = imported(&nonsense, plain()).unwrap_err().to_string();
+    assert_eq!(
+        error,
+        "record:1119: 1001 lines are cut or malformed and 58 values good: this is no such record"
+    );
     let long = "x".repeat(70_000);
     let error = imported(&long, plain()).unwrap_err().to_string();
     assert!(error.starts_with("record:1: is longer than 64 KiB"), "{error}");
@@ -371,21 +507,14 @@ fn design_cycles() {
 #[test]
 fn the_shipped_sites_are_what_their_records_give() {
     let options = plain();
-    let (fresh, _) = imported(VALDEZ_DAILY, options.clone())
-        .unwrap()
-        .gathered()
-        .site("valdez-coast", &options, "")
-        .unwrap();
+    let (fresh, _) =
+        imported(VALDEZ_DAILY, options.clone()).unwrap().site("valdez-coast", "").unwrap();
     let shipped = BuiltIn.site("valdez-coast").unwrap().unwrap();
     assert_eq!(
         (fresh.minima, fresh.winter, fresh.below),
         (shipped.minima, shipped.winter, shipped.below)
     );
-    let (fresh, _) = imported(&northway(), options.clone())
-        .unwrap()
-        .gathered()
-        .site("northway-interior", &options, "")
-        .unwrap();
+    let (fresh, _) = imported(&northway(), options).unwrap().site("northway-interior", "").unwrap();
     let shipped = BuiltIn.site("northway-interior").unwrap().unwrap();
     assert_eq!(
         (fresh.minima, fresh.cold_day, fresh.below),

@@ -447,7 +447,7 @@ fn climates_are_listed_shown_and_made() {
     assert_eq!(value["cold"]["against"].as_array().unwrap().len(), 8);
     // Damaged: one message, nothing written.
     let broken = folder.join("broken.csv");
-    std::fs::write(&broken, "date,tmin\n2020-01-02,-5\n2020-01-01,-6\n").unwrap();
+    std::fs::write(&broken, "date,tmin_c\n2020-01-02,-5\n2020-01-01,-6\n").unwrap();
     let other = folder.join("other.toml");
     let made = run(&["climate", "from", broken.to_str().unwrap(), "-o", other.to_str().unwrap()]);
     assert_eq!(made.status.code(), Some(2));

@@ -360,12 +360,6 @@ fn inlet(setup: &Setup<'_>, edge: Edge, rpm: f64, least_kpa: f64, assumed: bool)
         });
     };
     let q = setup.flow_per_rpm * rpm;
-    if assumed {
-        let misfit = setup.case.policy.limits.misfit_viscosity_mm2_s;
-        if line.pressure_kpa(q, misfit, setup.bulk.density_15()) < least_kpa {
-            return Outcome::NotChecked(Why::TypicalLimitDoesNotFit);
-        }
-    }
     let (from, to) = (setup.bottom_c, setup.case.policy.limits.search_to_c);
     // Hot oil that flows turbulently passes the hump of the transition on its way up.
     // There it loses at most 1.6 times what it loses at a Reynolds number of 2000 (friction factor
@@ -389,6 +383,18 @@ fn inlet(setup: &Setup<'_>, edge: Edge, rpm: f64, least_kpa: f64, assumed: bool)
         let (spare, lost) = (full - least_kpa, full - pressure);
         if spare > 0.0 { (spare / lost).ln() } else { -1.0 }
     };
+    if assumed {
+        // Tried with hot oil, hump and all: where it fits, its temperature is no higher.
+        let hot = in_place_of_misfit(setup, edge).temperature();
+        let misfit = setup.case.policy.limits.misfit_viscosity_mm2_s;
+        let fits = match hot {
+            Some(t) => margin(t) >= 0.0,
+            None => line.pressure_kpa(q, misfit, setup.bulk.density(to)) >= least_kpa,
+        };
+        if !fits {
+            return Outcome::NotChecked(Why::TypicalLimitDoesNotFit);
+        }
+    }
     if margin(to) < 0.0 {
         return Outcome::Unattainable(Why::InletTooLow);
     }

@@ -269,6 +269,9 @@ pub(crate) struct ClimateFromArgs {
     /// Local standard time less UTC, hours: for records in UTC
     #[arg(long, value_name = "HOURS", allow_hyphen_values = true)]
     pub(crate) utc_offset: Option<f64>,
+    /// The station to take, where records hold more than one
+    #[arg(long, value_name = "ID")]
+    pub(crate) station: Option<String>,
     /// Unit of values whose file does not say it
     #[arg(long, value_enum, value_name = "UNIT")]
     pub(crate) units: Option<UnitArg>,

@@ -135,8 +135,9 @@ fn from(args: &ClimateFromArgs) -> Result<u8> {
             UnitArg::F => Unit::Fahrenheit,
         }),
         start_hour: args.start_hour,
+        station: args.station.clone(),
     };
-    let mut import = Import::new(options.clone());
+    let mut import = Import::new(options);
     for path in &args.records {
         let shown = path.display().to_string();
         let file = std::fs::File::open(path).with_context(|| format!("cannot read {shown}"))?;
@@ -185,7 +186,7 @@ fn from(args: &ClimateFromArgs) -> Result<u8> {
             .collect();
         files.join("; ")
     });
-    let (site, cautions) = match import.gathered().site(&name, &options, &source) {
+    let (site, cautions) = match import.site(&name, &source) {
         Ok(done) => done,
         Err(message) => {
             tell!(
@@ -197,8 +198,14 @@ fn from(args: &ClimateFromArgs) -> Result<u8> {
     };
     let used = import.gathered().used();
     tell!("{} lines, {used} temperatures used", import.lines());
-    for (drop, count) in import.dropped() {
-        tell!("  {count} dropped: {}", drop.words());
+    for (why, dropped) in import.dropped() {
+        tell!(
+            "  {} dropped, the first in {}:{}: {}",
+            dropped.count,
+            dropped.file,
+            dropped.line,
+            why.words()
+        );
     }
     for caution in &cautions {
         tell!("  mind: {caution}");

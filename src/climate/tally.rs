@@ -68,6 +68,41 @@ impl Seen {
     }
 }
 
+/// The value of each day, in hundredths of a degree: two bytes a day.
+#[derive(Debug, Clone, Default)]
+pub struct Values(Vec<i16>);
+
+/// No value yet.
+const EMPTY: i16 = i16::MIN;
+
+impl Values {
+    /// Sets the value of a day, °C in -300 to 300; gives the one that was there before, which stays.
+    pub fn set(&mut self, day: Day, celsius: f64) -> Option<f64> {
+        let at = day as usize;
+        if at >= self.0.len() {
+            self.0.resize(at + 1, EMPTY);
+        }
+        let value = self.0.get_mut(at)?;
+        if *value != EMPTY {
+            return Some(f64::from(*value) / 100.0);
+        }
+        #[allow(clippy::cast_possible_truncation, reason = "in range")]
+        {
+            *value = (celsius * 100.0).round() as i16;
+        }
+        None
+    }
+
+    /// The value of a day, °C.
+    #[must_use]
+    pub fn get(&self, day: Day) -> Option<f64> {
+        self.0
+            .get(day as usize)
+            .filter(|value| **value != EMPTY)
+            .map(|value| f64::from(*value) / 100.0)
+    }
+}
+
 /// Temperatures counted in hundredths of a degree.
 #[derive(Debug, Clone)]
 pub struct Bins {

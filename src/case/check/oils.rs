@@ -42,6 +42,7 @@ impl Desk<'_> {
         let in_service = self.switch(&key("in_service")).unwrap_or(false);
         let reference_only = self.switch(&key("reference_only"));
         let mut points = self.points(&key("viscosity"));
+        let sheet = points.len();
         points.append(&mut self.points(&key("cold_viscosity")));
         let viscosity_index = self.number(&key("viscosity_index"));
         let pour_point = self.given(&key("pour_point"));
@@ -114,6 +115,10 @@ impl Desk<'_> {
             biodegradable,
             reference_only: reference_only.unwrap_or(false),
         };
+        self.cold_points_fit(number, &data, sheet, policy);
+        if self.faults.len() > faults_before {
+            return None;
+        }
         match Oil::from_data(data, &policy.oil) {
             Ok(oil) if oil.viscosity_index().is_some_and(|index| !ORDINARY.contains(&index)) => {
                 let index = oil.viscosity_index().unwrap_or_default();
@@ -123,11 +128,51 @@ impl Desk<'_> {
                 );
                 None
             }
+            Ok(oil) if !GRADES.contains(&oil.expected(40.0)) => {
+                let at_40 = crate::quantity::shown(oil.expected(40.0).round());
+                self.fault(
+                    &key("viscosity"),
+                    format!("comes to {at_40} mm²/s at 40 °C, but the grades of ISO 3448 run from 2 to 3200; is there a digit too many or too few?"),
+                );
+                None
+            }
             Ok(oil) => Some(oil),
             Err(error) => {
                 let at = self.blamed(number, &error);
                 self.fault(&at, error.to_string());
                 None
+            }
+        }
+    }
+
+    /// A viscosity measured in the cold may lie off the line of the data sheet, but not by a digit.
+    fn cold_points_fit(&mut self, number: usize, data: &OilData, sheet: usize, policy: &Policy) {
+        let (warm, cold) = data.points.split_at(sheet.min(data.points.len()));
+        let line = OilData { points: warm.to_vec(), ..data.clone() };
+        let Ok(line) = Oil::from_data(line, &policy.oil) else { return };
+        let bulk = line.bulk();
+        for (at, reading) in cold {
+            let t = at.as_celsius();
+            let measured = match reading {
+                ViscosityReading::Kinematic(value) => value.as_mm2_per_s(),
+                ViscosityReading::Dynamic(value) => value.as_mpa_s() * 1000.0 / bulk.density(t),
+                ViscosityReading::Saybolt(_) => continue,
+            };
+            let expected = line.expected(t);
+            let ratio = measured / expected;
+            if !OFF_THE_LINE.contains(&ratio) {
+                let shown = crate::quantity::shown;
+                let round = |value: f64| shown(format!("{value:.1e}").parse().unwrap_or(value));
+                let key =
+                    self.blamed(number, &OilError::Curve(CurveError::SameTemperature { at: t }));
+                self.fault(
+                    &key,
+                    format!(
+                        "is {} times the {} mm²/s that the data sheet's figures come to there; is there a digit too many or too few?",
+                        round(ratio),
+                        round(expected)
+                    ),
+                );
             }
         }
     }
@@ -273,6 +318,12 @@ impl Desk<'_> {
 
 /// Viscosity indices that oils have, with room on both sides.
 const ORDINARY: std::ops::RangeInclusive<f64> = -150.0..=500.0;
+
+/// Viscosity at 40 °C of the thinnest to the thickest grade of ISO 3448, mm²/s.
+const GRADES: std::ops::RangeInclusive<f64> = 1.98..=3520.0;
+
+/// Measured over the D341 line of the data sheet: wax thickens by tens, a PAO is thinner by half.
+const OFF_THE_LINE: std::ops::RangeInclusive<f64> = 0.125..=50.0;
 
 /// The kinematic viscosity among data-sheet points at a temperature, mm²/s.
 fn kinematic_at(points: &[(Temperature, ViscosityReading)], celsius: f64) -> Option<f64> {

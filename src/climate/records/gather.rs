@@ -1,13 +1,14 @@
 //! What is kept of a record while it is read, and the climate file it comes to.
 
-use super::layout::{TYPICAL_YEAR, Where};
+use super::layout::Where;
+use super::lines::TYPICAL_YEAR;
 use super::{Drop, Options};
 use crate::climate::extremes::Winters;
 use crate::climate::site::{
     Below, ColdDay, Kind, Minima, Monthly, OnceIn, Reading, Site, Spell, Wind, WinterMinimum,
 };
 use crate::climate::tally::{
-    Bins, Day, LEAST_DAYS, Runs, Seen, Winter, WinterRows, day_of, winter_of,
+    Bins, Day, LEAST_DAYS, Runs, Seen, Values, Winter, WinterRows, day_of, winter_of,
 };
 
 /// One value of a record.
@@ -62,8 +63,9 @@ pub struct Gathered {
     daily: Bins,
     hourly: Bins,
     at_start: Bins,
-    seen: Seen,
-    maxima: Seen,
+    hours: Seen,
+    minima: Values,
+    maxima: Values,
     winters: WinterRows,
     winter_days: Seen,
     minimum_months: [Sum; 12],
@@ -87,8 +89,9 @@ impl Gathered {
             daily: Bins::default(),
             hourly: Bins::default(),
             at_start: Bins::default(),
-            seen: Seen::default(),
-            maxima: Seen::default(),
+            hours: Seen::default(),
+            minima: Values::default(),
+            maxima: Values::default(),
             winters: WinterRows::new(),
             winter_days: Seen::default(),
             minimum_months: [Sum::default(); 12],
@@ -113,44 +116,47 @@ impl Gathered {
                 "daily and hourly records cannot be mixed; import them one by one".to_owned()
             );
         }
-        Ok(match row {
+        match row {
             Row::Minimum { day, celsius } => self.minimum(day, celsius),
             Row::Maximum { day, celsius } => self.maximum(day, celsius),
             Row::Hour { year, month, day, hour, celsius, wind, joined } => {
-                self.hour((year, month, day, hour), celsius, wind, joined)
+                Ok(self.hour((year, month, day, hour), celsius, wind, joined))
             }
-        })
+        }
     }
 
-    fn minimum(&mut self, day: Day, celsius: f64) -> Result<(), Drop> {
-        if !(-90.0..=60.0).contains(&celsius) {
-            return Err(Drop::Impossible);
+    fn minimum(&mut self, day: Day, celsius: f64) -> Result<Result<(), Drop>, String> {
+        if !possible(celsius) {
+            return Ok(Err(Drop::Impossible));
         }
-        if !self.seen.mark(day) {
-            return Err(Drop::Duplicate);
+        if let Some(before) = self.minima.set(day, celsius) {
+            return again(day, before, celsius);
         }
         self.daily.add(celsius);
-        let (year, month) = civil(day);
+        let (year, month, _) = civil(day);
         self.year(year);
         if let Some(sum) = self.minimum_months.get_mut(month as usize - 1) {
             sum.add(celsius);
         }
         self.winter_day(day, year, month, celsius);
-        Ok(())
+        Ok(Ok(()))
     }
 
-    fn maximum(&mut self, day: Day, celsius: f64) -> Result<(), Drop> {
-        if !(-90.0..=60.0).contains(&celsius) {
-            return Err(Drop::Impossible);
+    fn maximum(&mut self, day: Day, celsius: f64) -> Result<Result<(), Drop>, String> {
+        if !possible(celsius) {
+            return Ok(Err(Drop::Impossible));
         }
-        if !self.maxima.mark(day) {
-            return Err(Drop::Duplicate);
+        if self.minima.get(day).is_some_and(|minimum| celsius < minimum) {
+            return Ok(Err(Drop::MaximumUnderMinimum));
         }
-        let (_, month) = civil(day);
+        if let Some(before) = self.maxima.set(day, celsius) {
+            return again(day, before, celsius);
+        }
+        let (_, month, _) = civil(day);
         if let Some(sum) = self.maximum_months.get_mut(month as usize - 1) {
             sum.add(celsius);
         }
-        Ok(())
+        Ok(Ok(()))
     }
 
     fn hour(
@@ -161,11 +167,11 @@ impl Gathered {
         joined: bool,
     ) -> Result<(), Drop> {
         let date = day_of(year, month, day).ok_or(Drop::NoDate)?;
-        if !(-90.0..=60.0).contains(&celsius) {
+        if !possible(celsius) {
             return Err(Drop::Impossible);
         }
         let index = date * 24 + hour - 1;
-        if !self.seen.mark(index) {
+        if !self.hours.mark(index) {
             return Err(Drop::Duplicate);
         }
         self.hourly.add(celsius);
@@ -285,7 +291,7 @@ impl Gathered {
     ///
     /// # Errors
     /// Nothing was gathered.
-    pub fn site(
+    pub(super) fn site(
         &self,
         name: &str,
         options: &Options,
@@ -302,7 +308,12 @@ impl Gathered {
             "record"
         };
         let of = if hourly { "hours" } else { "daily minima, colder than that of hours" };
+        let year_round = self.year_round();
+        if !year_round {
+            cautions.push("under a year of values, or months nearly missing: no 99.6 % and 99 % values, no counts of hours and mornings, no monthly means".to_owned());
+        }
         let percent = |share: f64| {
+            year_round.then_some(())?;
             Some(Reading {
                 celsius: round(self.percentile(share)?),
                 how: format!(
@@ -378,13 +389,13 @@ impl Gathered {
                 class: None,
                 once_in,
             },
-            wind: self.cold_wind(),
+            wind: if year_round { self.cold_wind() } else { None },
             cold_day: self.coldest_day.map(|(_, hours)| ColdDay {
                 hours_c: hours.to_vec(),
                 how: format!("coldest day by its mean; {kept}"),
             }),
-            monthly: self.monthly(hourly, kept),
-            below: self.thresholds(hourly),
+            monthly: if year_round { self.monthly(hourly, kept) } else { None },
+            below: if year_round { self.thresholds(hourly) } else { Vec::new() },
             spell: self
                 .runs
                 .coldest()
@@ -396,6 +407,15 @@ impl Gathered {
             winter: minima,
         };
         Ok((site, cautions))
+    }
+
+    /// Nine tenths of a year at least, and every month with half its share.
+    fn year_round(&self) -> bool {
+        let hourly = self.hourly.total() > 0;
+        let (months, year) =
+            if hourly { (&self.hour_months, 8760.0) } else { (&self.minimum_months, 365.0) };
+        let total = self.used() as f64;
+        total >= 0.9 * year && months.iter().all(|month| month.count as f64 >= total / 24.0)
     }
 
     fn monthly(&self, hourly: bool, kept: &str) -> Option<Monthly> {
@@ -474,8 +494,25 @@ fn round(celsius: f64) -> f64 {
     (celsius * 100.0).round() / 100.0
 }
 
-/// Year and month of a day.
-fn civil(day: Day) -> (i32, u32) {
+/// What a temperature of the air can be, °C.
+fn possible(celsius: f64) -> bool {
+    (-90.0..=60.0).contains(&celsius)
+}
+
+/// A day that has its value already: the same again is nothing new, another is a contradiction.
+fn again(day: Day, before: f64, celsius: f64) -> Result<Result<(), Drop>, String> {
+    if (before - celsius).abs() < 0.006 {
+        return Ok(Err(Drop::Duplicate));
+    }
+    let (year, month, day) = civil(day);
+    Err(format!(
+        "{year}-{month:02}-{day:02} has two values, {before} °C and {} °C; take one of them out",
+        round(celsius)
+    ))
+}
+
+/// Year, month and day of the month.
+fn civil(day: Day) -> (i32, u32, u32) {
     // The inverse of `day_of`: Hinnant's civil from days.
     let z = i64::from(day) + 620_853;
     let era = z.div_euclid(146_097);
@@ -485,5 +522,7 @@ fn civil(day: Day) -> (i32, u32) {
     let mp = (5 * doy + 2) / 153;
     let month = if mp < 10 { mp + 3 } else { mp - 9 };
     let year = yoe + era * 400 + i64::from(month <= 2);
-    (i32::try_from(year).unwrap_or(0), u32::try_from(month).unwrap_or(1))
+    let day = doy - (153 * mp + 2) / 5 + 1;
+    let small = |value: i64| u32::try_from(value).unwrap_or(1);
+    (i32::try_from(year).unwrap_or(0), small(month), small(day))
 }

@@ -4,10 +4,13 @@
 //! data dictionary; TMY3 as distributed; ISD-Lite as distributed. Order of attributes in the
 //! per-station CSV and tenths in it: memory.
 
+use super::fields::{decimal, fields, iso_day, number, separator_of, us_date};
 use super::gather::Row;
+use super::lines::{TYPICAL_YEAR, daily, dly, epw, ghcn_row, is_dly, is_ghcn_row, isd, joins};
 use super::{Drop, Options};
 use crate::climate::site::Place;
-use crate::climate::tally::{Day, day_of, days_in};
+use crate::climate::tally::Day;
+use std::borrow::Cow;
 
 /// A layout.
 #[derive(Debug, Clone, Copy, PartialEq, Eq)]
@@ -22,6 +25,7 @@ pub enum Layout {
     Tmy3,
     IsdLite,
     DateTmin,
+    Hours,
 }
 
 impl Layout {
@@ -31,12 +35,13 @@ impl Layout {
         match self {
             Self::GhcnDly => "GHCN-Daily, fixed width (.dly), tenths of °C",
             Self::GhcnRows => "GHCN-Daily, one value a row, tenths of °C",
-            Self::GhcnStation => "GHCN-Daily, per-station CSV, tenths of °C",
+            Self::GhcnStation => "GHCN-Daily, one day a row with attributes",
             Self::GhcnOrder => "GHCN-Daily, order-tool CSV, whole degrees",
             Self::Epw => "EPW, hourly, °C",
             Self::Tmy3 => "TMY3 CSV, hourly, °C",
             Self::IsdLite => "ISD-Lite, hourly in UTC, tenths of °C",
             Self::DateTmin => "CSV with date and tmin",
+            Self::Hours => "CSV of hours in local standard time",
         }
     }
 }
@@ -61,17 +66,51 @@ pub(super) struct Where {
     pub(super) elevation_m: Option<f64>,
 }
 
-type Rows<'a> = dyn FnMut(Result<Row, Drop>) -> Result<(), String> + 'a;
+pub(super) type Rows<'a> = dyn FnMut(Result<Row, Drop>) -> Result<(), String> + 'a;
 
 #[derive(Debug)]
 enum State {
     Dly,
     Rows,
-    Columns { date: usize, tmin: usize, tmax: Option<usize>, attributes: bool, tenths: bool },
-    Epw { typical: Option<(i32, u32)> },
-    Tmy3 { date: usize, time: usize, dry: usize, wind: Option<usize>, typical: Option<(i32, u32)> },
-    Isd { offset_h: f64 },
-    DateTmin { date: usize, tmin: usize, separator: char },
+    Columns {
+        station: usize,
+        date: usize,
+        tmin: usize,
+        tmax: Option<usize>,
+        attributes: bool,
+        width: usize,
+    },
+    Epw {
+        typical: Option<(i32, u32)>,
+    },
+    Tmy3 {
+        date: usize,
+        time: usize,
+        dry: usize,
+        wind: Option<usize>,
+        width: usize,
+        typical: Option<(i32, u32)>,
+    },
+    Isd {
+        offset_h: f64,
+    },
+    DateTmin {
+        date: usize,
+        tmin: usize,
+        separator: char,
+        width: usize,
+    },
+    Hours {
+        /// Year, month, day, hour.
+        time: [usize; 4],
+        dry: usize,
+        wind: Option<usize>,
+        separator: char,
+        width: usize,
+        /// Months joined from different years.
+        joined: bool,
+        typical: Option<(i32, u32)>,
+    },
 }
 
 /// A layout under way.
@@ -79,8 +118,12 @@ enum State {
 pub(super) struct Parser {
     layout: Layout,
     state: State,
-    unit: Unit,
-    unit_known: bool,
+    /// The unit told or found; `None` where integers with attributes may be tenths of °C.
+    unit: Option<Unit>,
+    /// The number form of the values, with a decimal point or without.
+    decimals: Option<bool>,
+    /// The largest value without a decimal point.
+    largest: f64,
     place: Where,
     last: Option<Day>,
 }
@@ -90,16 +133,14 @@ impl Parser {
     pub(super) fn of(head: &[String], options: &Options) -> Result<Option<Self>, String> {
         let Some(first) = head.first() else { return Ok(None) };
         let last = head.last().map_or(first.as_str(), String::as_str);
-        let unit = options.unit.unwrap_or(Unit::Celsius);
-        let make = |layout, state, place| {
-            Ok(Some(Self {
-                layout,
-                state,
-                unit,
-                unit_known: options.unit.is_some(),
-                place,
-                last: None,
-            }))
+        let with = |layout, state, place, unit| {
+            Ok(Some(Self { layout, state, unit, decimals: None, largest: 0.0, place, last: None }))
+        };
+        let make = |layout: Layout, state, place| match options.unit {
+            Some(Unit::Fahrenheit) => {
+                Err(format!("is read as {}, which is in °C; leave --units out", layout.words()))
+            }
+            _ => with(layout, state, place, Some(Unit::Celsius)),
         };
         if let Some(rest) = first.strip_prefix("LOCATION,") {
             // Eight lines of header.
@@ -129,37 +170,78 @@ impl Parser {
             (find("date (mm/dd/yyyy)"), find("time (hh:mm)"), find("dry-bulb (c)"))
         {
             let wind = find("wspd (m/s)");
-            let state = State::Tmy3 { date, time, dry, wind, typical: None };
+            let width = names.len();
+            let state = State::Tmy3 { date, time, dry, wind, width, typical: None };
             let place = if head.len() > 1 { tmy3_place(first) } else { Where::default() };
             return make(Layout::Tmy3, state, place);
         }
         if head.len() > 1 {
             return Ok(None);
         }
-        if let (Some(_), Some(date), Some(tmin)) = (find("station"), find("date"), find("tmin")) {
+        let width = names.len();
+        if let (Some(station), Some(date), Some(tmin)) =
+            (find("station"), find("date"), find("tmin"))
+        {
             let attributes = find("tmin_attributes").is_some();
             let state =
-                State::Columns { date, tmin, tmax: find("tmax"), attributes, tenths: attributes };
+                State::Columns { station, date, tmin, tmax: find("tmax"), attributes, width };
             let layout = if attributes { Layout::GhcnStation } else { Layout::GhcnOrder };
-            return make(layout, state, Where::default());
+            if !attributes && options.unit.is_none() {
+                return Err(unit_not_told("TMIN"));
+            }
+            return with(layout, state, Where::default(), options.unit);
         }
         let tmin = ["tmin", "tmin_c", "tmin_f"].iter().find_map(|name| Some((*name, find(name)?)));
         if let (Some(date), Some((name, tmin))) = (find("date"), tmin) {
-            let said = match name {
-                "tmin_c" => Some(Unit::Celsius),
-                "tmin_f" => Some(Unit::Fahrenheit),
-                _ => None,
+            let unit = unit_of(name, options)?;
+            let state = State::DateTmin { date, tmin, separator, width };
+            return with(Layout::DateTmin, state, Where::default(), Some(unit));
+        }
+        let hour = ["hour", "hour_ending_lst"].iter().find_map(|name| find(name));
+        let year = ["year", "source_year"].iter().find_map(|name| find(name));
+        let dry = ["drybulb_c", "drybulb_f"].iter().find_map(|name| Some((*name, find(name)?)));
+        if let (Some(year), Some(month), Some(day), Some(hour), Some((name, dry))) =
+            (year, find("month"), find("day"), hour, dry)
+        {
+            let unit = unit_of(name, options)?;
+            let state = State::Hours {
+                time: [year, month, day, hour],
+                dry,
+                wind: find("wind_speed_m_s"),
+                separator,
+                width,
+                joined: find("source_year").is_some(),
+                typical: None,
             };
-            return Ok(Some(Self {
-                layout: Layout::DateTmin,
-                state: State::DateTmin { date, tmin, separator },
-                unit: said.unwrap_or(unit),
-                unit_known: said.is_some() || options.unit.is_some(),
-                place: Where::default(),
-                last: None,
-            }));
+            return with(Layout::Hours, state, Where::default(), Some(unit));
         }
         Ok(None)
+    }
+
+    /// The station a line is of, where the layout says it in every line.
+    pub(super) fn station_of<'a>(&self, text: &'a str) -> Option<Cow<'a, str>> {
+        let id = match &self.state {
+            State::Dly => Cow::Borrowed(text.get(..11)?.trim()),
+            State::Rows => Cow::Borrowed(text.split(',').next()?.trim()),
+            State::Columns { station, .. } => {
+                Cow::Owned(fields(text, ',').into_iter().nth(*station)?.trim().to_owned())
+            }
+            _ => return None,
+        };
+        (!id.is_empty()).then_some(id)
+    }
+
+    /// Integers with attributes are tenths of °C in some tables and whole °F in others. Where no value
+    /// is too large for °F, only a word from whoever fetched the file can tell.
+    ///
+    /// # Errors
+    /// What to say.
+    pub(super) fn doubt_of_unit(&self) -> Result<(), String> {
+        let tenths = self.unit.is_none() && self.decimals == Some(false);
+        if tenths && self.largest <= HOTTEST_F {
+            return Err(unit_not_told("TMIN"));
+        }
+        Ok(())
     }
 
     /// Rows of the record that stand in the lines that were read to tell the layout.
@@ -187,8 +269,11 @@ impl Parser {
         match &mut self.state {
             State::Dly => dly(text, rows),
             State::Rows => ghcn_row(text, rows),
-            State::Columns { date, tmin, tmax, attributes, tenths } => {
+            State::Columns { date, tmin, tmax, attributes, width, .. } => {
                 let row = fields(text, ',');
+                if row.len() < *width {
+                    return rows(Err(Drop::CutLine));
+                }
                 let at = |column: usize| row.get(column).map(|field| field.trim());
                 let Some(day) = at(*date).and_then(iso_day) else {
                     return rows(Err(Drop::NoDate));
@@ -196,48 +281,35 @@ impl Parser {
                 if self.place.title.is_none() {
                     self.place.title = row.get(1).map(|name| name.trim().to_owned());
                 }
+                let (attributes, low, high) = (*attributes, *tmin, *tmax);
                 let flagged = |column: usize| {
-                    *attributes
+                    attributes
                         && at(column + 1)
                             .and_then(|flags| flags.split(',').nth(1))
                             .is_some_and(|flag| !flag.trim().is_empty())
                 };
-                let scale = if *tenths { 0.1 } else { 1.0 };
-                let value = |column: usize| -> Result<f64, Drop> {
-                    let text = at(column).filter(|text| !text.is_empty()).ok_or(Drop::Missing)?;
-                    let value: f64 = text.parse().map_err(|_| Drop::CutLine)?;
-                    if value <= -9999.0 {
-                        return Err(Drop::Missing);
-                    }
-                    if flagged(column) {
-                        return Err(Drop::Flagged);
-                    }
-                    Ok(value * scale)
-                };
-                let low = value(*tmin);
-                let high = tmax.map(value);
-                if let (Ok(low), Some(Ok(high))) = (&low, &high) {
-                    if high < low {
-                        return rows(Err(Drop::MaximumUnderMinimum));
-                    }
-                }
-                let tenths = *tenths;
-                match low {
-                    Ok(low) => {
-                        let low = self.celsius(low, tenths)?;
-                        rows(Ok(Row::Minimum { day, celsius: low }))?;
-                    }
-                    Err(drop) => rows(Err(drop))?,
-                }
-                if let Some(Ok(high)) = high {
-                    let high = self.celsius(high, tenths)?;
-                    rows(Ok(Row::Maximum { day, celsius: high }))?;
+                for (column, minimum) in [(Some(low), true), (high, false)] {
+                    let Some(column) = column else { continue };
+                    let text = at(column).unwrap_or_default();
+                    let row = match text.parse::<f64>() {
+                        // A day without a maximum lacks nothing that is asked for.
+                        Err(_) if text.is_empty() && !minimum => continue,
+                        Err(_) if text.is_empty() => Err(Drop::Missing),
+                        Err(_) => Err(Drop::CutLine),
+                        Ok(value) if value <= -9999.0 => Err(Drop::Missing),
+                        Ok(_) if flagged(column) => Err(Drop::Flagged),
+                        Ok(value) => Ok(daily(minimum, day, self.tabled(text, value, attributes)?)),
+                    };
+                    rows(row)?;
                 }
                 Ok(())
             }
             State::Epw { typical } => epw(text, typical, rows),
-            State::Tmy3 { date, time, dry, wind, typical } => {
+            State::Tmy3 { date, time, dry, wind, width, typical } => {
                 let row = fields(text, ',');
+                if row.len() < *width {
+                    return rows(Err(Drop::CutLine));
+                }
                 let at = |column: usize| row.get(column).map_or("", |field| field.trim());
                 let (date, time) = (at(*date), at(*time));
                 let Some((month, day, year)) = us_date(date) else {
@@ -259,8 +331,40 @@ impl Parser {
                 rows(Ok(Row::Hour { year: TYPICAL_YEAR, month, day, hour, celsius, wind, joined }))
             }
             State::Isd { offset_h } => isd(text, *offset_h, rows),
-            State::DateTmin { date, tmin, separator } => {
+            State::Hours { time, dry, wind, separator, width, joined, typical } => {
                 let row = fields(text, *separator);
+                if row.len() < *width {
+                    return rows(Err(Drop::CutLine));
+                }
+                let at = |column: usize| row.get(column).map_or("", |field| field.trim());
+                let [year, month, day, hour] = time.map(|column| at(column).parse::<i32>().ok());
+                let (Some(mut year), Some(month), Some(day), Some(hour)) = (year, month, day, hour)
+                else {
+                    return rows(Err(Drop::NoDate));
+                };
+                let unsigned = |value: i32| u32::try_from(value).unwrap_or(0);
+                let (month, day, hour) = (unsigned(month), unsigned(day), unsigned(hour));
+                if !(1..=24).contains(&hour) {
+                    return rows(Err(Drop::NoDate));
+                }
+                let joins = *joined && joins(typical, year, month);
+                if *joined {
+                    year = TYPICAL_YEAR;
+                }
+                let Some(value) = decimal(at(*dry), *separator) else {
+                    return rows(Err(Drop::Missing));
+                };
+                let wind = wind
+                    .and_then(|column| decimal(at(column), *separator))
+                    .filter(|wind| (0.0..=60.0).contains(wind));
+                let celsius = self.celsius(value);
+                rows(Ok(Row::Hour { year, month, day, hour, celsius, wind, joined: joins }))
+            }
+            State::DateTmin { date, tmin, separator, width } => {
+                let row = fields(text, *separator);
+                if row.len() < *width {
+                    return rows(Err(Drop::CutLine));
+                }
                 let at = |column: usize| row.get(column).map_or("", |field| field.trim());
                 let Some(day) = iso_day(at(*date)) else {
                     return Err(format!(
@@ -284,234 +388,74 @@ impl Parser {
                 if text.is_empty() || text.eq_ignore_ascii_case("na") {
                     return rows(Err(Drop::Missing));
                 }
-                let number =
-                    if *separator == ',' { text.to_owned() } else { text.replace(',', ".") };
-                let value: f64 = number
-                    .parse()
-                    .map_err(|_| format!("`{text}` is no temperature; write a plain number"))?;
+                let value = decimal(text, *separator)
+                    .ok_or_else(|| format!("`{text}` is no temperature; write a plain number"))?;
                 if value <= -9999.0 || (value - 99.9).abs() < 1e-9 {
                     return rows(Err(Drop::Missing));
                 }
-                let celsius = self.celsius(value, false)?;
+                let celsius = self.celsius(value);
                 rows(Ok(Row::Minimum { day, celsius }))
             }
         }
     }
 
-    /// A value in °C; asks where the unit is not known and the value says it is another.
-    fn celsius(&self, value: f64, tenths: bool) -> Result<f64, String> {
-        if tenths {
-            return Ok(value);
-        }
+    /// A value of the unit told, in °C.
+    fn celsius(&self, value: f64) -> f64 {
         match self.unit {
-            Unit::Fahrenheit => Ok((value - 32.0) / 1.8),
-            Unit::Celsius if !self.unit_known && value.abs() > 60.0 && value.abs() < 150.0 => {
-                Err(format!(
-                    "{value} is no minimum in °C; are these °F? say so with --units f, or --units c"
-                ))
+            Some(Unit::Fahrenheit) => (value - 32.0) / 1.8,
+            _ => value,
+        }
+    }
+
+    /// A value of a daily table, in °C. With attributes beside them integers are tenths of °C, or
+    /// whole °F where that is told; with a decimal point they are whole degrees.
+    fn tabled(&mut self, text: &str, value: f64, attributes: bool) -> Result<f64, String> {
+        if !attributes {
+            return Ok(self.celsius(value));
+        }
+        let decimals = text.contains('.');
+        if self.decimals.is_some_and(|before| before != decimals) {
+            return Err(format!(
+                "`{text}` {} a decimal point, other than the values before it: tenths and whole degrees are mixed",
+                if decimals { "has" } else { "is without" }
+            ));
+        }
+        self.decimals = Some(decimals);
+        match self.unit {
+            None if decimals => Err(unit_not_told("TMIN")),
+            Some(Unit::Fahrenheit) => Ok(self.celsius(value)),
+            _ if decimals => Ok(value),
+            _ => {
+                self.largest = self.largest.max(value.abs());
+                Ok(value * 0.1)
             }
-            Unit::Celsius => Ok(value),
         }
     }
 }
 
-/// Months of a typical year come from different years: all are laid on this one.
-pub(super) const TYPICAL_YEAR: i32 = 2001;
+/// The hottest day there can be, °F: integers beyond it are tenths of °C.
+const HOTTEST_F: f64 = 134.0;
 
-/// Whether a row starts a month of another year than the one before: an artificial join.
-fn joins(typical: &mut Option<(i32, u32)>, year: i32, month: u32) -> bool {
-    let joined = typical.is_some_and(|(y, m)| m != month && y != year);
-    *typical = Some((year, month));
-    joined
+fn unit_not_told(column: &str) -> String {
+    format!("the unit of `{column}` is not in the file; say --units c or --units f")
 }
 
-fn is_dly(line: &str) -> bool {
-    line.is_ascii()
-        && line.len() >= 29
-        && !line.contains(',')
-        && line.get(11..17).is_some_and(|t| t.bytes().all(|b| b.is_ascii_digit()))
-        && line
-            .get(17..21)
-            .is_some_and(|t| t.bytes().all(|b| b.is_ascii_uppercase() || b.is_ascii_digit()))
-}
-
-fn is_ghcn_row(line: &str) -> bool {
-    let mut fields = line.split(',');
-    let (id, date, element) = (fields.next(), fields.next(), fields.next());
-    id.is_some_and(|id| id.len() == 11)
-        && date.is_some_and(|date| date.len() == 8 && date.bytes().all(|b| b.is_ascii_digit()))
-        && element.is_some_and(|element| element.len() == 4)
-}
-
-fn dly(text: &str, rows: &mut Rows<'_>) -> Result<(), String> {
-    if !is_dly(text) {
-        return rows(Err(Drop::CutLine));
-    }
-    let element = text.get(17..21).unwrap_or_default();
-    let minimum = match element {
-        "TMIN" => true,
-        "TMAX" => false,
-        _ => return Ok(()),
+/// The unit of a column by its name, by what is told, or neither.
+fn unit_of(column: &str, options: &Options) -> Result<Unit, String> {
+    let named = if column.ends_with("_c") {
+        Some(Unit::Celsius)
+    } else if column.ends_with("_f") {
+        Some(Unit::Fahrenheit)
+    } else {
+        None
     };
-    let (Some(year), Some(month)) = (
-        text.get(11..15).and_then(|t| t.parse::<i32>().ok()),
-        text.get(15..17).and_then(|t| t.parse::<u32>().ok()),
-    ) else {
-        return rows(Err(Drop::NoDate));
-    };
-    if !(1..=12).contains(&month) {
-        return rows(Err(Drop::NoDate));
-    }
-    for day in 1..=days_in(year, month) {
-        let from = 21 + 8 * (day as usize - 1);
-        let Some(value) = text.get(from..from + 5) else {
-            rows(Err(Drop::CutLine))?;
-            continue;
-        };
-        let quality = text.get(from + 6..from + 7).unwrap_or(" ");
-        let row = match value.trim().parse::<f64>() {
-            Err(_) => Err(Drop::CutLine),
-            Ok(value) if value <= -9999.0 => Err(Drop::Missing),
-            Ok(_) if quality != " " => Err(Drop::Flagged),
-            Ok(value) => day_of(year, month, day)
-                .map(|day| daily(minimum, day, value * 0.1))
-                .ok_or(Drop::NoDate),
-        };
-        rows(row)?;
-    }
-    Ok(())
-}
-
-const fn daily(minimum: bool, day: Day, celsius: f64) -> Row {
-    if minimum { Row::Minimum { day, celsius } } else { Row::Maximum { day, celsius } }
-}
-
-fn ghcn_row(text: &str, rows: &mut Rows<'_>) -> Result<(), String> {
-    let mut fields = text.split(',');
-    let (_, date, element, value) = (fields.next(), fields.next(), fields.next(), fields.next());
-    let minimum = match element {
-        Some("TMIN") => true,
-        Some("TMAX") => false,
-        Some(other) if other.len() == 4 => return Ok(()),
-        _ => return rows(Err(Drop::CutLine)),
-    };
-    let (_, quality) = (fields.next(), fields.next());
-    let Some(quality) = quality else { return rows(Err(Drop::CutLine)) };
-    let Some(day) = date.and_then(compact_day) else { return rows(Err(Drop::NoDate)) };
-    let row = match value.map(|value| value.trim().parse::<f64>()) {
-        Some(Ok(value)) if value <= -9999.0 => Err(Drop::Missing),
-        Some(Ok(_)) if !quality.trim().is_empty() => Err(Drop::Flagged),
-        Some(Ok(value)) => Ok(daily(minimum, day, value * 0.1)),
-        _ => Err(Drop::CutLine),
-    };
-    rows(row)
-}
-
-fn epw(text: &str, typical: &mut Option<(i32, u32)>, rows: &mut Rows<'_>) -> Result<(), String> {
-    let mut fields = text.split(',');
-    let mut whole = || fields.next().and_then(|field| field.trim().parse::<i32>().ok());
-    let (Some(year), Some(month), Some(day), Some(hour)) = (whole(), whole(), whole(), whole())
-    else {
-        return rows(Err(Drop::CutLine));
-    };
-    let unsigned = |value: i32| u32::try_from(value).unwrap_or(0);
-    let (month, day, hour) = (unsigned(month), unsigned(day), unsigned(hour));
-    // Minute and flags lie between; then the dry bulb.
-    let Some(dry) = fields.nth(2).and_then(|field| field.trim().parse::<f64>().ok()) else {
-        return rows(Err(Drop::CutLine));
-    };
-    if dry >= 99.9 {
-        return rows(Err(Drop::Missing));
-    }
-    if !(1..=24).contains(&hour) {
-        return rows(Err(Drop::NoDate));
-    }
-    // The wind speed is column 22.
-    let wind = fields
-        .nth(14)
-        .and_then(|field| field.trim().parse::<f64>().ok())
-        .filter(|wind| (0.0..=60.0).contains(wind));
-    let joined = joins(typical, year, month);
-    rows(Ok(Row::Hour { year: TYPICAL_YEAR, month, day, hour, celsius: dry, wind, joined }))
-}
-
-fn isd(text: &str, offset_h: f64, rows: &mut Rows<'_>) -> Result<(), String> {
-    let fields: Vec<i64> = text.split_whitespace().filter_map(|field| field.parse().ok()).collect();
-    let &[year, month, day, hour, air, _, _, _, wind, ..] = fields.as_slice() else {
-        return rows(Err(Drop::CutLine));
-    };
-    if air <= -9999 {
-        return rows(Err(Drop::Missing));
-    }
-    let unsigned = |value: i64| u32::try_from(value).unwrap_or(0);
-    let Ok(year) = i32::try_from(year) else { return rows(Err(Drop::NoDate)) };
-    let (mut month, mut day) = (unsigned(month), unsigned(day));
-    if day_of(year, month, day).is_none() || !(0..=23).contains(&hour) {
-        return rows(Err(Drop::NoDate));
-    }
-    // Local standard time; the reading of 00:00 is the 24th hour of the day before.
-    let mut year = year;
-    #[allow(clippy::cast_possible_truncation, reason = "a day's hours")]
-    let mut local = hour + offset_h.round() as i64;
-    while local < 1 {
-        local += 24;
-        if day > 1 {
-            day -= 1;
-        } else {
-            (year, month) = if month == 1 { (year - 1, 12) } else { (year, month - 1) };
-            day = days_in(year, month);
+    match (named, options.unit) {
+        (Some(named), Some(told)) if named != told => {
+            Err(format!("`{column}` names another unit than --units; leave --units out"))
         }
+        (Some(unit), _) | (None, Some(unit)) => Ok(unit),
+        (None, None) => Err(unit_not_told(column)),
     }
-    while local > 24 {
-        local -= 24;
-        if day < days_in(year, month) {
-            day += 1;
-        } else {
-            (year, month, day) = if month == 12 { (year + 1, 1, 1) } else { (year, month + 1, 1) };
-        }
-    }
-    let wind = (wind > -9999).then_some(wind as f64 / 10.0);
-    rows(Ok(Row::Hour {
-        year,
-        month,
-        day,
-        hour: unsigned(local),
-        celsius: air as f64 / 10.0,
-        wind,
-        joined: false,
-    }))
-}
-
-/// `19470101`.
-fn compact_day(text: &str) -> Option<Day> {
-    if text.len() != 8 {
-        return None;
-    }
-    day_of(
-        text.get(..4)?.parse().ok()?,
-        text.get(4..6)?.parse().ok()?,
-        text.get(6..8)?.parse().ok()?,
-    )
-}
-
-/// `1947-01-01`.
-fn iso_day(text: &str) -> Option<Day> {
-    let mut parts = text.trim().splitn(3, '-');
-    let (year, month, day) = (parts.next()?, parts.next()?, parts.next()?);
-    day_of(year.parse().ok()?, month.parse().ok()?, day.get(..2.min(day.len()))?.parse().ok()?)
-}
-
-/// `01/31/1988` as (month, day, year).
-fn us_date(text: &str) -> Option<(u32, u32, i32)> {
-    let mut parts = text.trim().splitn(3, '/');
-    let month: u32 = parts.next()?.parse().ok()?;
-    let day: u32 = parts.next()?.parse().ok()?;
-    let year: i32 = parts.next()?.parse().ok()?;
-    day_of(year, month, day).map(|_| (month, day, year))
-}
-
-fn number(text: Option<&str>) -> Option<f64> {
-    text?.trim().parse().ok()
 }
 
 fn epw_place(rest: &str) -> Where {
@@ -536,24 +480,4 @@ fn tmy3_place(first: &str) -> Where {
             .map(|(latitude, longitude)| Place { latitude, longitude }),
         elevation_m: number(at(6)),
     }
-}
-
-fn separator_of(line: &str) -> char {
-    [';', '\t'].into_iter().find(|c| line.contains(*c)).unwrap_or(',')
-}
-
-/// Fields of a line; quotes may hold separators.
-fn fields(line: &str, separator: char) -> Vec<String> {
-    let mut out = vec![String::new()];
-    let mut quoted = false;
-    for c in line.chars() {
-        if c == '"' {
-            quoted = !quoted;
-        } else if c == separator && !quoted {
-            out.push(String::new());
-        } else if let Some(last) = out.last_mut() {
-            last.push(c);
-        }
-    }
-    out
 }

@@ -6,15 +6,21 @@
 //! Invariants: a value that failed a check of its source is never used; daily and hourly records are
 //! never mixed; a day or an hour counts once.
 
+mod fields;
 mod gather;
 mod layout;
+mod lines;
 
 pub use gather::Gathered;
 pub use layout::{Layout, Unit};
 
+use crate::climate::Site;
 use layout::Parser;
 use std::collections::BTreeMap;
 use std::io::BufRead;
+
+/// So many malformed lines are borne, if more are good.
+const MOST_CUT: u64 = 1000;
 
 /// No line of a record is longer, bytes.
 const LONGEST_LINE: usize = 64 * 1024;
@@ -28,6 +34,8 @@ pub struct Options {
     pub unit: Option<Unit>,
     /// Hour of the morning that starts are counted at, 1 to 24.
     pub start_hour: u32,
+    /// The station to take, where records hold more than one.
+    pub station: Option<String>,
 }
 
 /// Why values were dropped.
@@ -42,6 +50,7 @@ pub enum Drop {
     Duplicate,
     MaximumUnderMinimum,
     CutLine,
+    OtherStation,
 }
 
 impl Drop {
@@ -54,10 +63,22 @@ impl Drop {
             Self::Impossible => "not between -90 and 60 °C",
             Self::NoDate => "without a date that exists",
             Self::Duplicate => "of a day or hour seen already",
-            Self::MaximumUnderMinimum => "of days whose maximum is under the minimum",
+            Self::MaximumUnderMinimum => "maxima under the minimum of their day, which is kept",
             Self::CutLine => "on lines that are cut or malformed",
+            Self::OtherStation => "of other stations",
         }
     }
+}
+
+/// How often, and where first.
+#[derive(Debug, Clone, PartialEq, Eq)]
+pub struct Dropped {
+    /// How many values.
+    pub count: u64,
+    /// The file of the first.
+    pub file: String,
+    /// Its line, from 1.
+    pub line: u64,
 }
 
 /// What is wrong with a record.
@@ -97,7 +118,8 @@ pub enum RecordError {
 pub struct Import {
     options: Options,
     gathered: Gathered,
-    dropped: BTreeMap<Drop, u64>,
+    dropped: BTreeMap<Drop, Dropped>,
+    station: Option<String>,
     layouts: Vec<(String, Layout)>,
     lines: u64,
 }
@@ -108,6 +130,7 @@ impl Import {
     pub fn new(options: Options) -> Self {
         let start_hour = options.start_hour.clamp(1, 24);
         Self {
+            station: options.station.clone(),
             options,
             gathered: Gathered::new(start_hour),
             dropped: BTreeMap::new(),
@@ -120,7 +143,8 @@ impl Import {
     ///
     /// # Errors
     /// What cannot be read, a layout that is not known, a line over 64 KiB, hours in UTC without an
-    /// offset, values that look like another unit, daily records mixed with hourly ones.
+    /// offset, a unit that is not told or contradicts the file, a second station, a day with two
+    /// values, daily records mixed with hourly ones, mostly malformed lines.
     pub fn file(
         &mut self,
         file: &str,
@@ -156,18 +180,16 @@ impl Import {
                 |message| RecordError::Line { file: file.to_owned(), line: number, message };
             match &mut parser {
                 Some(parser) => {
-                    self.line(parser, text).map_err(wrong)?;
+                    self.line(parser, text, (file, number)).map_err(wrong)?;
                 }
                 None => {
                     if text.trim().is_empty() && head.is_empty() {
                         continue;
                     }
                     head.push(text.to_owned());
-                    if let Some(found) = Parser::of(&head, &self.options).map_err(wrong)? {
-                        let waiting = found.rows_in_head(&head);
-                        let mut found = found;
-                        for line in waiting {
-                            self.line(&mut found, &line).map_err(wrong)?;
+                    if let Some(mut found) = Parser::of(&head, &self.options).map_err(wrong)? {
+                        for line in found.rows_in_head(&head) {
+                            self.line(&mut found, &line, (file, number)).map_err(wrong)?;
                         }
                         parser = Some(found);
                     } else if head.len() > layout::LONGEST_HEAD {
@@ -179,9 +201,12 @@ impl Import {
         let Some(parser) = parser else {
             return Err(RecordError::File {
                 file: file.to_owned(),
-                message: "is in no layout known here; it takes GHCN-Daily (.dly, by-year rows, per-station CSV, order-tool CSV), EPW, TMY3 CSV, ISD-Lite, or a CSV with the columns date and tmin".to_owned(),
+                message: "is in no layout known here; it takes GHCN-Daily (.dly, by-year rows, per-station CSV, order-tool CSV), EPW, TMY3 CSV, ISD-Lite, a CSV with the columns date and tmin_c, or one of hours with year, month, day, hour and drybulb_c".to_owned(),
             });
         };
+        parser
+            .doubt_of_unit()
+            .map_err(|message| RecordError::File { file: file.to_owned(), message })?;
         self.gathered.end_of_file(&parser.place());
         self.lines += number;
         let layout = parser.layout();
@@ -189,25 +214,65 @@ impl Import {
         Ok(layout)
     }
 
-    fn line(&mut self, parser: &mut Parser, text: &str) -> Result<(), String> {
-        let Self { gathered, dropped, .. } = self;
-        parser.line(text, &mut |row| match row {
-            Ok(row) => {
-                if let Err(drop) = gathered.add(row)? {
-                    *dropped.entry(drop).or_default() += 1;
+    fn line(&mut self, parser: &mut Parser, text: &str, at: (&str, u64)) -> Result<(), String> {
+        if let Some(id) = parser.station_of(text) {
+            match &self.station {
+                Some(station) if *station == *id => {}
+                Some(_) if self.options.station.is_some() => {
+                    return self.drop(Drop::OtherStation, at);
                 }
-                Ok(())
+                Some(station) => {
+                    return Err(format!(
+                        "station `{id}` after station `{station}`; say which one, for example --station {station}"
+                    ));
+                }
+                None => self.station = Some(id.into_owned()),
             }
-            Err(drop) => {
-                *dropped.entry(drop).or_default() += 1;
-                Ok(())
-            }
+        }
+        parser.line(text, &mut |row| match row {
+            Ok(row) => match self.gathered.add(row)? {
+                Ok(()) => Ok(()),
+                Err(why) => self.drop(why, at),
+            },
+            Err(why) => self.drop(why, at),
         })
+    }
+
+    fn drop(&mut self, why: Drop, (file, line): (&str, u64)) -> Result<(), String> {
+        let dropped = self.dropped.entry(why).or_insert_with(|| Dropped {
+            count: 0,
+            file: file.to_owned(),
+            line,
+        });
+        dropped.count += 1;
+        let used = self.gathered.used();
+        if why == Drop::CutLine && dropped.count > MOST_CUT && dropped.count > used {
+            return Err(format!(
+                "{} lines are cut or malformed and {used} values good: this is no such record",
+                dropped.count
+            ));
+        }
+        Ok(())
+    }
+
+    /// The climate file; and what to mind about it.
+    ///
+    /// # Errors
+    /// Nothing was gathered, or too much of it cannot be a temperature of the air.
+    pub fn site(&self, name: &str, source: &str) -> Result<(Site, Vec<String>), String> {
+        let impossible = self.dropped.get(&Drop::Impossible).map_or(0, |dropped| dropped.count);
+        let used = self.gathered.used();
+        if impossible * 20 > used + impossible {
+            return Err(format!(
+                "{impossible} readings lie outside -90 to 60 °C, {used} inside: the unit is not what the file or --units says (tenths of a degree?)"
+            ));
+        }
+        self.gathered.site(name, &self.options, source)
     }
 
     /// How many values were dropped, by reason.
     #[must_use]
-    pub const fn dropped(&self) -> &BTreeMap<Drop, u64> {
+    pub const fn dropped(&self) -> &BTreeMap<Drop, Dropped> {
         &self.dropped
     }
 
