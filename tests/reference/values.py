@@ -1,7 +1,7 @@
 """Single figures over their whole legal range, from libraries or the published equations.
 
-One function a quantity: its arguments are drawn at both ends of their ranges, then at random; it
-returns None where the arguments go together to nothing legal, and is drawn anew. The library named
+One function a quantity: its arguments are drawn at random, each one time in five at an end of its
+range; it returns None where they go together to nothing legal, and they are drawn anew. The library named
 beside it does the work; `published` means the equation is written out here. Air is that of CoolProp,
 except where a figure checks the integration and not the air.
 
@@ -52,13 +52,12 @@ def log(low, high):
     return "log", low, high
 
 
-def drawn(rng, of, end):
-    """An argument: at the low (0) or high (1) end of its range, or anywhere in it (None)."""
+def drawn(rng, of):
     if callable(of):
         return of(rng)
     if isinstance(of, list):
         return rng.choice(of)
-    share = rng.random() if end is None else end
+    share = rng.choice([0, 1]) if rng.random() < 0.2 else rng.random()
     if of[0] == "log":
         value = of[1] * (of[2] / of[1]) ** share
     else:
@@ -69,13 +68,12 @@ def drawn(rng, of, end):
 def values_of(name, seed):
     count, library, ranges, function = QUANTITIES[name]
     rng = random.Random(f"{seed} {name}")
-    ends, tries = [0, 1], 0
+    tries = 20000
     while count:
-        tries += 1
-        if tries > 20000:
+        tries -= 1
+        if not tries:
             sys.exit(f"{name}: the ranges hold too few legal values")
-        end = ends.pop(0) if ends else None
-        inputs = {key: drawn(rng, of, end) for key, of in ranges.items()}
+        inputs = {key: drawn(rng, of) for key, of in ranges.items()}
         value = function(**inputs)
         if value is not None:
             count -= 1
@@ -339,11 +337,7 @@ def hose_clearing(dp, nu, density, bore, length):
     return way.t_events[0][0] * scale
 
 
-def set_at(rng):
-    return round(math.exp(rng.uniform(math.log(100), math.log(40000))), 1)
-
-
-@quantity(60, "CoolProp", pressure=set_at, at=(-60, 120), to=(-60, 120))
+@quantity(80, "CoolProp", pressure=log(100, 40000), at=(-60, 120), to=(-60, 120))
 def precharge(pressure, at, to):
     density = PropsSI("D", "T", at + ZERO, "P", pressure * 1000 + 101325, "Nitrogen")
     return PropsSI("P", "T", to + ZERO, "D", density, "Nitrogen") / 1000 - 101.325
