@@ -1,9 +1,9 @@
 """Single figures over their whole legal range, from libraries or the published equations.
 
 One function a quantity: its arguments are drawn at random, each one time in five at an end of its
-range; it returns None where they go together to nothing legal, and they are drawn anew. The library named
-beside it does the work; `published` means the equation is written out here. Air is that of CoolProp,
-except where a figure checks the integration and not the air.
+range; it returns None where they go together to nothing legal, and they are drawn anew. The library
+named beside it does the work; `published` means the equation is written out here. Air is that of
+CoolProp, except where a figure checks the integration and not the air.
 
     values.py --write values.json [--seed 20261201]     all values; prints the seed
     values.py --check values.json --part 6              every sixth value anew, exit 1 on a mismatch
