@@ -598,7 +598,7 @@ fn an_answer_file_runs_the_whole_interview() {
     let written = std::fs::read_to_string(folder.join("made.toml")).unwrap();
     assert!(written.contains("shift_start = \"06:30\""), "{written}");
     // Never over a file that is there.
-    assert_eq!(go(&["-o", "made.toml"]).status.code(), Some(1));
+    assert_eq!(go(&["-o", "made.toml"]).status.code(), Some(2));
     std::fs::write(folder.join("answers.toml"), text.replace("4 h", "four hours")).unwrap();
     let output = go(&["-o", "other.toml"]);
     assert_eq!(output.status.code(), Some(2));

@@ -2,7 +2,7 @@
 
 use super::first_turn::{self, Circulation, FirstTurn};
 use super::heating::{self, Heating, HeatingStatus, HeatingWhy, Tank};
-use super::limits::{Edge, LIMITS, LimitId, Outcome, Side, Why};
+use super::limits::{Edge, LIMITS, LimitId, Outcome, Side, Why, in_place_of_misfit};
 use super::say::{Figure, Fill, Reason};
 use super::setup::Setup;
 use crate::case::{Case, FluidKind};
@@ -154,12 +154,18 @@ pub fn assess(case: &Case, oil: &Oil) -> Assessment {
     let light = |result: &LimitResult| {
         start(result.side) || result.side == Side::Light || result.id == LimitId::ViscosityWork
     };
-    // Full load asks for no less than light work: where the inlet at work speed was not checked, what
-    // light work needs still counts.
-    let work = |side| matches!(side, Side::Start | Side::Light | Side::Work);
-    let start_floor = floor(&limits, |r| start(r.side), |r| r.outcome);
-    let light_floor = floor(&limits, light, |r| r.outcome);
-    let work_floor = floor(&limits, |r| work(r.side), |r| r.outcome);
+    let work = |side| matches!(side, Side::Start | Side::Work);
+    let misfit = |edge| {
+        // Seldom asked for: only where a typical limit does not fit.
+        let any = limits.iter().any(|r| r.outcome.why() == Some(Why::TypicalLimitDoesNotFit));
+        any.then(|| in_place_of_misfit(&setup, edge))
+    };
+    let (hot, hot_expected) = (misfit(Edge::Thick), misfit(Edge::Expected));
+    let thick = |r: &LimitResult| r.outcome.or_if_misfit(hot);
+    let expected = |r: &LimitResult| r.expected.or_if_misfit(hot_expected);
+    let start_floor = floor(&limits, |r| start(r.side), thick);
+    let light_floor = floor(&limits, light, thick);
+    let work_floor = floor(&limits, |r| work(r.side), thick);
     let find = |id| limits.iter().find(|result: &&LimitResult| result.id == id);
     let gels = setup.line_floor_c().is_some_and(|line| setup.soak_c < line);
 
@@ -182,10 +188,10 @@ pub fn assess(case: &Case, oil: &Oil) -> Assessment {
         tank_soak_c: tank.soak_c,
         at_soak: oil.estimate(setup.soak_c),
         start_floor,
-        start_floor_expected: floor(&limits, |r| start(r.side), |r| r.expected),
+        start_floor_expected: floor(&limits, |r| start(r.side), expected),
         light_floor,
         work_floor,
-        work_floor_expected: floor(&limits, |r| work(r.side), |r| r.expected),
+        work_floor_expected: floor(&limits, |r| work(r.side), expected),
         hot_ceiling_c: find(LimitId::ViscosityMin).and_then(|r| r.outcome.temperature()),
         low_at_max,
         limits,
@@ -253,8 +259,12 @@ fn judge(setup: &Setup<'_>, gels: bool, found: &mut Assessment) {
         if let Outcome::NotChecked(why @ Why::TypicalLimitDoesNotFit) = result.outcome {
             because(
                 "limit-does-not-fit",
-                "{limit} not checked: {why}",
-                &[("limit", result.id.id().into()), ("why", why.to_string().into())],
+                "{limit} not checked: {why}; until the pump's own limit is given its floor asks for oil of {hot} or thinner",
+                &[
+                    ("limit", result.id.id().into()),
+                    ("why", why.to_string().into()),
+                    ("hot", Figure::Viscosity(case.policy.limits.misfit_viscosity_mm2_s).into()),
+                ],
             );
         }
     }

@@ -141,6 +141,14 @@ impl Outcome {
         }
     }
 
+    /// Another outcome in place of a typical limit that does not fit the machine.
+    pub(super) fn or_if_misfit(self, instead: Option<Self>) -> Self {
+        match self {
+            Self::NotChecked(Why::TypicalLimitDoesNotFit) => instead.unwrap_or(self),
+            _ => self,
+        }
+    }
+
     /// Why there is no temperature.
     #[must_use]
     pub const fn why(self) -> Option<Why> {
@@ -300,6 +308,13 @@ fn viscosity_start(setup: &Setup<'_>, edge: Edge) -> Outcome {
 
 fn viscosity_work(setup: &Setup<'_>, edge: Edge) -> Outcome {
     thinner_than(setup, edge, setup.case.pump.viscosity_work_max.as_mm2_per_s())
+}
+
+/// What a floor asks for in place of a typical inlet limit that does not fit the machine: oil as thin
+/// as the limit was tried with. A limit that just fits asks for no more, so a floor never falls
+/// where it stops to fit.
+pub(super) fn in_place_of_misfit(setup: &Setup<'_>, edge: Edge) -> Outcome {
+    thinner_than(setup, edge, setup.case.policy.limits.misfit_viscosity_mm2_s)
 }
 
 /// The lowest temperature from which the oil is no thicker than `limit`: viscosity falls on warming,

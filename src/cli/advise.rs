@@ -17,12 +17,12 @@ pub(crate) fn run(args: &AdviseArgs, look: &LookArgs) -> Result<u8> {
         let case = match case(path, &args.set, &args.oil) {
             Ok(case) => case,
             Err(Trouble::Wrong(message)) => {
-                eprintln!("{message}");
+                tell!("{message}");
                 code = worse(code, WRONG);
                 continue;
             }
             Err(Trouble::Io(error)) => {
-                eprintln!("coldsump: {error:#}");
+                tell!("coldsump: {error:#}");
                 code = worse(code, FAILED);
                 continue;
             }
@@ -39,12 +39,7 @@ pub(crate) fn run(args: &AdviseArgs, look: &LookArgs) -> Result<u8> {
         match args.format {
             AdviseFormat::Json => {
                 let json = report::advice_json(&case, &advice);
-                out.push_str(&if args.cases.len() == 1 {
-                    serde_json::to_string_pretty(&json)?
-                } else {
-                    serde_json::to_string(&json)?
-                });
-                out.push('\n');
+                out.push_str(&output::json(&json, args.cases.len() == 1)?);
             }
             AdviseFormat::Html => out.push_str(&report::html(&case, &advice, units)),
             AdviseFormat::Markdown => out.push_str(&report::markdown(&document())),

@@ -98,6 +98,11 @@ In it: Esc goes back, `?` is I don't know, Ctrl-C leaves with everything saved."
     #[command(after_help = "Example:
   coldsump completions bash > ~/.local/share/bash-completion/completions/coldsump")]
     Completions(CompletionsArgs),
+    /// The manual page of the program, or of one command
+    #[command(after_help = "Examples:
+  coldsump man > coldsump.1
+  coldsump man fleet | man -l -")]
+    Man(ManArgs),
     /// One oil over temperature
     #[command(after_help = "Examples:
   coldsump oil HM-46 --at \"-40..100 °C by 10\"
@@ -153,6 +158,13 @@ pub(crate) struct CompletionsArgs {
     /// The shell
     #[arg(value_enum)]
     pub(crate) shell: clap_complete::Shell,
+}
+
+#[derive(Debug, Args)]
+pub(crate) struct ManArgs {
+    /// The command; the whole program where not given
+    #[arg(value_name = "COMMAND")]
+    pub(crate) command: Option<String>,
 }
 
 #[derive(Debug, Args)]

@@ -15,12 +15,12 @@ pub(crate) fn run(args: &AssessArgs, look: &LookArgs) -> Result<u8> {
         let case = match case(path, &args.set) {
             Ok(case) => case,
             Err(Trouble::Wrong(message)) => {
-                eprintln!("{message}");
+                tell!("{message}");
                 code = if code == FAILED { FAILED } else { WRONG };
                 continue;
             }
             Err(Trouble::Io(error)) => {
-                eprintln!("coldsump: {error:#}");
+                tell!("coldsump: {error:#}");
                 code = FAILED;
                 continue;
             }
@@ -33,7 +33,7 @@ pub(crate) fn run(args: &AssessArgs, look: &LookArgs) -> Result<u8> {
             .collect();
         if oils.is_empty() {
             let names: Vec<&str> = case.oils.iter().map(coldsump::oil::Oil::name).collect();
-            eprintln!(
+            tell!(
                 "{}: no oil of that name\n\ntry: --oil \"{}\"",
                 path.display(),
                 names.join("\" or \"")
@@ -44,12 +44,7 @@ pub(crate) fn run(args: &AssessArgs, look: &LookArgs) -> Result<u8> {
         match args.format {
             AssessFormat::Json => {
                 let json = report::assessment_json(&case, &oils);
-                let text = if args.cases.len() == 1 {
-                    serde_json::to_string_pretty(&json)?
-                } else {
-                    serde_json::to_string(&json)?
-                };
-                output::put(&format!("{text}\n"))?;
+                output::put(&output::json(&json, args.cases.len() == 1)?)?;
             }
             AssessFormat::Text => {
                 let units = output::units(args.units).unwrap_or(case.units);

@@ -66,7 +66,7 @@ pub(crate) fn run(command: &ClimateCommand, look: &LookArgs) -> Result<u8> {
                         None => Vec::new(),
                         Some(Ok(marks)) => marks,
                         Some(Err(Trouble::Wrong(message))) => {
-                            eprintln!("{message}");
+                            tell!("{message}");
                             return Ok(WRONG);
                         }
                         Some(Err(Trouble::Io(error))) => return Err(error),
@@ -76,14 +76,11 @@ pub(crate) fn run(command: &ClimateCommand, look: &LookArgs) -> Result<u8> {
                     Ok(DONE)
                 }
                 Ok(None) => {
-                    eprintln!(
-                        "no climate `{}` is at hand\n\ntry: coldsump climate list",
-                        args.name
-                    );
+                    tell!("no climate `{}` is at hand\n\ntry: coldsump climate list", args.name);
                     Ok(WRONG)
                 }
                 Err(message) => {
-                    eprintln!("{message}");
+                    tell!("{message}");
                     Ok(WRONG)
                 }
             }
@@ -120,7 +117,7 @@ fn list(look: &LookArgs) -> Result<u8> {
             Ok(site) if sites.iter().any(|known| known.name == site.name) => {}
             Ok(site) => sites.push(site),
             Err(message) => {
-                eprintln!("{message}");
+                tell!("{message}");
                 code = WRONG;
             }
         }
@@ -164,12 +161,12 @@ fn from(args: &ClimateFromArgs) -> Result<u8> {
             });
         bar.finish_and_clear();
         match found {
-            Ok(layout) => eprintln!("{shown}: read as {}", layout.words()),
+            Ok(layout) => tell!("{shown}: read as {}", layout.words()),
             Err(coldsump::climate::records::RecordError::Io { file, source }) => {
                 return Err(source).with_context(|| format!("cannot read {file}"));
             }
             Err(error) => {
-                eprintln!("{error}");
+                tell!("{error}");
                 return Ok(WRONG);
             }
         }
@@ -191,7 +188,7 @@ fn from(args: &ClimateFromArgs) -> Result<u8> {
     let (site, cautions) = match import.gathered().site(&name, &options, &source) {
         Ok(done) => done,
         Err(message) => {
-            eprintln!(
+            tell!(
                 "{}: {message}",
                 args.records.first().map_or("-".into(), |p| p.display().to_string())
             );
@@ -199,16 +196,16 @@ fn from(args: &ClimateFromArgs) -> Result<u8> {
         }
     };
     let used = import.gathered().used();
-    eprintln!("{} lines, {used} temperatures used", import.lines());
+    tell!("{} lines, {used} temperatures used", import.lines());
     for (drop, count) in import.dropped() {
-        eprintln!("  {count} dropped: {}", drop.words());
+        tell!("  {count} dropped: {}", drop.words());
     }
     for caution in &cautions {
-        eprintln!("  mind: {caution}");
+        tell!("  mind: {caution}");
     }
     let text = site.write().context("the climate file cannot be written down")?;
     output::write(&args.output, &text, args.force)?;
-    eprintln!(
+    tell!(
         "wrote {}\n\ntry: coldsump climate show {}",
         args.output.display(),
         args.output.display()

@@ -16,7 +16,7 @@ pub(crate) fn run(args: &CompareArgs, look: &LookArgs) -> Result<u8> {
                 sides.push((case, advice));
             }
             Err(Trouble::Wrong(message)) => {
-                eprintln!("{message}");
+                tell!("{message}");
                 return Ok(WRONG);
             }
             Err(Trouble::Io(error)) => return Err(error),

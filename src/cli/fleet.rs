@@ -28,7 +28,7 @@ pub(crate) fn run(args: &FleetArgs, look: &LookArgs) -> Result<u8> {
     let sets = match edits(&args.set) {
         Ok(sets) => sets,
         Err(message) => {
-            eprintln!("{message}");
+            tell!("{message}");
             return Ok(WRONG);
         }
     };
@@ -38,7 +38,7 @@ pub(crate) fn run(args: &FleetArgs, look: &LookArgs) -> Result<u8> {
     let mut sink = match Sink::open(args)? {
         Ok(sink) => sink,
         Err(message) => {
-            eprintln!("{message}");
+            tell!("{message}");
             return Ok(WRONG);
         }
     };
@@ -74,7 +74,7 @@ pub(crate) fn run(args: &FleetArgs, look: &LookArgs) -> Result<u8> {
     match whole? {
         Ok(()) => {}
         Err(message) => {
-            eprintln!("{message}");
+            tell!("{message}");
             return Ok(WRONG);
         }
     }
@@ -96,16 +96,19 @@ pub(crate) fn run(args: &FleetArgs, look: &LookArgs) -> Result<u8> {
         }
     }
     for fault in &faults {
-        eprintln!("{fault}");
+        tell!("{fault}");
     }
     if wrong > faults.len() as u64 {
-        eprintln!(
+        tell!(
             "{} more faults; csv and jsonl name each beside its row",
             wrong - faults.len() as u64
         );
     }
     Ok(code)
 }
+
+/// Base files kept read.
+const MOST_BASES: usize = 1024;
 
 /// Faults told at the end; every one stands in the output.
 const MOST_FAULTS: usize = 50;
@@ -137,6 +140,9 @@ fn each(
     let mut rows = rows.peekable();
     while rows.peek().is_some() {
         let chunk: Vec<_> = rows.by_ref().take(CHUNK).collect();
+        if bases.len() > MOST_BASES {
+            bases.clear();
+        }
         for row in chunk.iter().flatten() {
             let Some(base) = row.base.clone().or_else(|| args.base.clone()) else { continue };
             bases.entry(base.clone()).or_insert_with(|| {
@@ -211,6 +217,7 @@ fn one(
             .machine
             .chars()
             .map(|c| if c.is_alphanumeric() || c == '-' { c } else { '-' })
+            .take(60)
             .collect();
         let path = folder.join(format!("{:05}-{safe}.html", row.line));
         if let Err(error) = output::write(&path, &report::html(&case, advice, units), args.force) {
@@ -224,7 +231,10 @@ fn one(
                 map.insert("machine".to_owned(), row.machine.clone().into());
                 map.insert("count".to_owned(), row.count.into());
             }
-            format!("{json}\n")
+            match output::json(&json, false) {
+                Ok(line) => line,
+                Err(error) => return bad(args, &row.machine, &[at(&format!("{error:#}"))]),
+            }
         }
         (FleetFormat::Csv, _) => report::fleet_row(&machine),
         _ => String::new(),
@@ -236,7 +246,8 @@ fn one(
 fn bad(args: &FleetArgs, machine: &str, faults: &[String]) -> Done {
     let line = match args.format {
         FleetFormat::Jsonl => {
-            format!("{}\n", serde_json::json!({ "machine": machine, "error": faults }))
+            let row = serde_json::json!({ "machine": machine, "error": faults });
+            output::json(&row, false).unwrap_or_default()
         }
         FleetFormat::Csv => report::fleet_fault(machine, faults),
         _ => String::new(),
@@ -340,7 +351,7 @@ fn sweep(args: &FleetArgs, look: &LookArgs, sets: &[Edit], text: &str) -> Result
     let (key, values) = match steps(text) {
         Ok(steps) => steps,
         Err(message) => {
-            eprintln!("--sweep: {message}");
+            tell!("--sweep: {message}");
             return Ok(WRONG);
         }
     };
@@ -361,7 +372,7 @@ fn sweep(args: &FleetArgs, look: &LookArgs, sets: &[Edit], text: &str) -> Result
             Ok(())
         })?;
         if let Err(message) = whole {
-            eprintln!("{message}");
+            tell!("{message}");
             return Ok(WRONG);
         }
         if counts.wrong > 0 {

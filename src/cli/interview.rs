@@ -13,12 +13,16 @@ use std::path::{Path, PathBuf};
 pub(crate) fn run(args: &InterviewArgs, look: &LookArgs) -> Result<u8> {
     let seen = std::io::stdin().is_terminal() && std::io::stderr().is_terminal();
     if args.answers.is_none() && !args.plain && (!seen || look.no_input) {
-        eprintln!(
+        tell!(
             "the interview needs a terminal\n\ntry: coldsump interview --plain, or --answers FILE, or write a case file and coldsump advise it"
         );
         return Ok(WRONG);
     }
     let target = target(args);
+    if let Some(there) = taken(&target).filter(|_| !args.force) {
+        tell!("{} is there already\n\ntry: --force, or another name", there.display());
+        return Ok(WRONG);
+    }
     let base = match &args.case {
         Some(path) => {
             let (name, text) = output::read(path)?;
@@ -37,7 +41,7 @@ pub(crate) fn run(args: &InterviewArgs, look: &LookArgs) -> Result<u8> {
         let mut script = match Script::read(&name, &text) {
             Ok(script) => script,
             Err(message) => {
-                eprintln!("{message}");
+                tell!("{message}");
                 return Ok(WRONG);
             }
         };
@@ -46,7 +50,7 @@ pub(crate) fn run(args: &InterviewArgs, look: &LookArgs) -> Result<u8> {
             interview::interview(&mut script, &base, &mut draft, length, &sites, &mut |_| Ok(()));
         let unused: Vec<String> = script.unused().map(str::to_owned).collect();
         if !unused.is_empty() && done.is_ok() {
-            eprintln!("{name}: no question asked for {}", unused.join(", "));
+            tell!("{name}: no question asked for {}", unused.join(", "));
             return Ok(WRONG);
         }
         return close(done, args, &target, None, &sites, look);
@@ -73,7 +77,7 @@ pub(crate) fn run(args: &InterviewArgs, look: &LookArgs) -> Result<u8> {
         } else {
             format!("your answers are in {shown}; start again and go on")
         };
-        eprintln!("\nstopped: {kept}");
+        tell!("\nstopped: {kept}");
         return Ok(INTERRUPTED);
     }
     close(done, args, &target, Some(&drafted), &sites, look)
@@ -81,17 +85,26 @@ pub(crate) fn run(args: &InterviewArgs, look: &LookArgs) -> Result<u8> {
 
 /// Goes on with a draft that was left, where that is wanted.
 fn resume(ask: &mut dyn Ask, drafted: &Path, args: &InterviewArgs) -> Result<Draft> {
-    let Ok(text) = std::fs::read_to_string(drafted) else { return Ok(Draft::new()) };
+    let text = match std::fs::read(drafted) {
+        Ok(bytes) => String::from_utf8_lossy(&bytes).into_owned(),
+        Err(error) if error.kind() == std::io::ErrorKind::NotFound => return Ok(Draft::new()),
+        Err(error) => {
+            return Err(error).with_context(|| format!("cannot read {}", drafted.display()));
+        }
+    };
     let draft = match Draft::read(&drafted.display().to_string(), &text) {
         Ok(draft) => draft,
         Err(error) => {
-            ask.say(&format!("{error}; it is left as it is, and this is a new start"));
-            return Ok(Draft::new());
+            ask.say(&format!("{error}; this is a new start"));
+            return set_aside(ask, drafted);
         }
     };
     let count = draft.answers().count();
-    if count == 0 || args.fresh {
-        return Ok(Draft::new());
+    if count == 0 {
+        return Ok(draft);
+    }
+    if args.fresh {
+        return set_aside(ask, drafted);
     }
     let choices = [
         ("go-on".to_owned(), format!("go on with the {count} answers saved")),
@@ -112,10 +125,10 @@ fn resume(ask: &mut dyn Ask, drafted: &Path, args: &InterviewArgs) -> Result<Dra
         choices: &choices,
         check: &check,
     });
-    Ok(match reply {
-        Ok(Reply::Text(text)) if text == "anew" => Draft::new(),
-        _ => draft,
-    })
+    match reply {
+        Ok(Reply::Text(text)) if text == "anew" => set_aside(ask, drafted),
+        _ => Ok(draft),
+    }
 }
 
 /// The case is made: written, advised on, and the command that does it again named.
@@ -132,14 +145,14 @@ fn close(
         Err(Stop::Interrupted) => return Ok(INTERRUPTED),
         Err(Stop::Io(message)) => anyhow::bail!("{message}"),
         Err(stop) => {
-            eprintln!("{stop}");
+            tell!("{stop}");
             return Ok(WRONG);
         }
     };
     let case = match file.check_in(sites) {
         Ok(case) => case,
         Err(faults) => {
-            eprintln!("{faults}");
+            tell!("{faults}");
             return Ok(WRONG);
         }
     };
@@ -148,13 +161,13 @@ fn close(
     let document = report::advice(&case, &advice, units);
     output::write(target, &file.write(), args.force)?;
     let sheet = beside(target, "md");
-    output::write(&sheet, &report::markdown(&document), true)?;
+    output::write(&sheet, &report::markdown(&document), args.force)?;
     if let Some(drafted) = drafted {
         // The case holds all that the draft held.
         let _ = std::fs::remove_file(drafted);
     }
     output::put(&format!("\n{}", report::text(&document, output::look(look))))?;
-    eprintln!(
+    tell!(
         "\nthe case is in {}, the procedure to edit and sign in {}\n\ntry: coldsump advise {}",
         target.display(),
         sheet.display(),
@@ -176,13 +189,33 @@ fn target(args: &InterviewArgs) -> PathBuf {
         None => (PathBuf::new(), "case".to_owned()),
     };
     let first = folder.join(format!("{stem}.toml"));
-    if args.case.is_none() && !first.exists() {
+    if args.case.is_none() && taken(&first).is_none() {
         return first;
     }
     (2..)
         .map(|n| folder.join(format!("{stem}-{n}.toml")))
-        .find(|path| !path.exists())
+        .find(|path| taken(path).is_none())
         .unwrap_or(first)
+}
+
+/// The case or the procedure that would be written over.
+fn taken(target: &Path) -> Option<PathBuf> {
+    [target.to_path_buf(), beside(target, "md")]
+        .into_iter()
+        .find(|path| path.symlink_metadata().is_ok())
+}
+
+/// Answers that are not gone on with are kept under another name.
+fn set_aside(ask: &mut dyn Ask, drafted: &Path) -> Result<Draft> {
+    let free = (1..)
+        .map(|n| beside(drafted, &format!("old-{n}.toml")))
+        .find(|path| path.symlink_metadata().is_err());
+    if let Some(free) = free {
+        std::fs::rename(drafted, &free)
+            .with_context(|| format!("cannot keep {} as {}", drafted.display(), free.display()))?;
+        ask.say(&format!("The earlier answers are kept in {}.", free.display()));
+    }
+    Ok(Draft::new())
 }
 
 /// `loader.toml` with another end.
@@ -223,7 +256,7 @@ impl Ask for Terminal {
 
     fn say(&mut self, text: &str) {
         for line in text.lines() {
-            eprintln!("{}", wrapped(line, width()));
+            tell!("{}", wrapped(line, width()));
         }
     }
 }
@@ -231,18 +264,20 @@ impl Ask for Terminal {
 fn typed(prompt: &Prompt<'_>) -> Result<String, inquire::InquireError> {
     let mut initial = String::new();
     loop {
+        let shown;
         let mut question = inquire::Text::new(prompt.text);
         if !initial.is_empty() {
             question = question.with_initial_value(&initial);
         } else if let Some(default) = prompt.default {
-            question = question.with_default(default);
+            shown = coldsump::report::printable(default);
+            question = question.with_default(&shown);
         }
         let text = question.prompt()?;
         let text = if text.trim().is_empty() { "?".to_owned() } else { text.trim().to_owned() };
         match (prompt.check)(&text) {
             Ok(()) => return Ok(text),
             Err(message) => {
-                eprintln!("{}", wrapped(&format!("  ! {message}"), width()));
+                tell!("{}", wrapped(&format!("  ! {message}"), width()));
                 initial = if text == "?" { String::new() } else { text };
             }
         }
@@ -276,14 +311,16 @@ struct Plain<R> {
 impl<R: BufRead> Ask for Plain<R> {
     fn ask(&mut self, prompt: &Prompt<'_>) -> Result<Reply, Stop> {
         self.count += 1;
-        eprintln!("{}. {} [{}]", self.count, prompt.text, prompt.id);
-        eprintln!("   {}", prompt.help);
+        tell!("{}. {} [{}]", self.count, prompt.text, prompt.id);
+        tell!("   {}", prompt.help);
         for (at, (_, words)) in prompt.choices.iter().enumerate() {
-            eprintln!("   {} {words}", at + 1);
+            tell!("   {} {words}", at + 1);
         }
         loop {
             match prompt.default {
-                Some(default) => eprint!("   (Enter: {default}) > "),
+                Some(default) => {
+                    eprint!("   (Enter: {}) > ", coldsump::report::printable(default));
+                }
                 None => eprint!("   > "),
             }
             let _ = std::io::stderr().flush();
@@ -305,13 +342,13 @@ impl<R: BufRead> Ask for Plain<R> {
             let text = by_number.unwrap_or_else(|| text.to_owned());
             match (prompt.check)(&text) {
                 Ok(()) => return Ok(Reply::Text(text)),
-                Err(message) => eprintln!("   ! {message}"),
+                Err(message) => tell!("   ! {message}"),
             }
         }
     }
 
     fn say(&mut self, text: &str) {
-        eprintln!("{text}");
+        tell!("{text}");
     }
 }
 

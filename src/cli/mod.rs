@@ -1,5 +1,12 @@
 //! Arguments, commands, exit codes: thin.
 
+/// A line on standard error, safe to show whatever a file or a file name holds.
+macro_rules! tell {
+    ($($words:tt)*) => {
+        eprintln!("{}", coldsump::report::printable(&format!($($words)*)))
+    };
+}
+
 mod advise;
 mod args;
 mod assess;
@@ -30,13 +37,11 @@ pub(crate) fn main() -> ExitCode {
     let done = match cli.command {
         None => match interview::offered(&cli.look) {
             Ok(None) => {
-                eprintln!(
-                    "coldsump: which oil, which heater, which steps on the coldest morning\n"
-                );
-                eprintln!("try: coldsump interview --quick");
-                eprintln!("try: coldsump advise CASE.toml");
-                eprintln!("try: coldsump oil HM-46 --at \"-40..100 °C by 10\"");
-                eprintln!("try: coldsump --help");
+                tell!("coldsump: which oil, which heater, which steps on the coldest morning\n");
+                tell!("try: coldsump interview --quick");
+                tell!("try: coldsump advise CASE.toml");
+                tell!("try: coldsump oil HM-46 --at \"-40..100 °C by 10\"");
+                tell!("try: coldsump --help");
                 Ok(WRONG)
             }
             Ok(Some(code)) => Ok(code),
@@ -51,6 +56,7 @@ pub(crate) fn main() -> ExitCode {
             clap_complete::generate(args.shell, &mut Cli::command(), "coldsump", &mut out);
             output::put(&String::from_utf8_lossy(&out)).map(|()| DONE)
         }
+        Some(Command::Man(args)) => man(args.command.as_deref()),
         Some(Command::Compare(args)) => compare::run(&args, &cli.look),
         Some(Command::Fleet(args)) => fleet::run(&args, &cli.look),
         Some(Command::Climate(command)) => climate::run(&command, &cli.look),
@@ -61,18 +67,39 @@ pub(crate) fn main() -> ExitCode {
         // A reader that has read enough, such as `head`, is no failure.
         Err(error) if closed_pipe(&error) => ExitCode::from(DONE),
         Err(error) => {
-            eprintln!("coldsump: {error:#}");
+            tell!("coldsump: {error:#}");
             ExitCode::from(FAILED)
         }
     }
+}
+
+/// The manual page, in roff.
+fn man(command: Option<&str>) -> anyhow::Result<u8> {
+    let mut program = Cli::command();
+    program.build();
+    let page = match command {
+        None => program,
+        Some(name) => match program.find_subcommand(name) {
+            Some(found) => found.clone(),
+            None => {
+                let names: Vec<&str> =
+                    program.get_subcommands().map(clap::Command::get_name).collect();
+                tell!("no command `{name}`\n\ntry: {}", names.join(", "));
+                return Ok(WRONG);
+            }
+        },
+    };
+    let mut roff = Vec::new();
+    clap_mangen::Man::new(page).render(&mut roff)?;
+    output::put(&String::from_utf8_lossy(&roff))?;
+    Ok(DONE)
 }
 
 fn schema(of: args::SchemaOf) -> anyhow::Result<u8> {
     match of {
         args::SchemaOf::Advice => output::put(coldsump::report::ADVICE_SCHEMA)?,
         args::SchemaOf::Case => {
-            let text = serde_json::to_string_pretty(&coldsump::report::case_schema())?;
-            output::put(&format!("{text}\n"))?;
+            output::put(&output::json(&coldsump::report::case_schema(), true)?)?;
         }
     }
     Ok(DONE)

@@ -18,7 +18,7 @@ pub(crate) fn run(args: &OilArgs, look: &LookArgs) -> Result<u8> {
         Ok(oils) => oils,
         Err(Trouble::Wrong(message)) => return wrong(&message),
         Err(Trouble::Io(error)) => {
-            eprintln!("coldsump: {error:#}");
+            tell!("coldsump: {error:#}");
             return Ok(FAILED);
         }
     };
@@ -27,12 +27,7 @@ pub(crate) fn run(args: &OilArgs, look: &LookArgs) -> Result<u8> {
         match args.format {
             OilFormat::Json => {
                 let json = report::oil_points_json(oil, &temperatures);
-                text.push_str(&if oils.len() == 1 {
-                    serde_json::to_string_pretty(&json)?
-                } else {
-                    serde_json::to_string(&json)?
-                });
-                text.push('\n');
+                text.push_str(&output::json(&json, oils.len() == 1)?);
             }
             OilFormat::Csv => text.push_str(&report::oil_points_csv(oil, &temperatures, at == 0)),
             OilFormat::Text => {
@@ -50,7 +45,7 @@ pub(crate) fn run(args: &OilArgs, look: &LookArgs) -> Result<u8> {
 }
 
 fn wrong(message: &str) -> Result<u8> {
-    eprintln!("{message}");
+    tell!("{message}");
     Ok(WRONG)
 }
 

@@ -35,6 +35,23 @@ pub(crate) fn units(arg: Option<UnitsArg>) -> Option<Units> {
     })
 }
 
+/// JSON as a line, or laid out where it stands alone. No control character is left in it: those
+/// over U+007E are legal in JSON, but a terminal may obey them.
+pub(crate) fn json(value: &serde_json::Value, alone: bool) -> Result<String> {
+    let text =
+        if alone { serde_json::to_string_pretty(value)? } else { serde_json::to_string(value)? };
+    let mut safe = String::with_capacity(text.len() + 1);
+    for c in text.chars() {
+        if c.is_control() && c != '\n' {
+            safe.push_str(&format!("\\u{:04x}", u32::from(c)));
+        } else {
+            safe.push(c);
+        }
+    }
+    safe.push('\n');
+    Ok(safe)
+}
+
 /// Writes to standard output.
 pub(crate) fn put(text: &str) -> Result<()> {
     let mut out = std::io::stdout().lock();
@@ -43,12 +60,34 @@ pub(crate) fn put(text: &str) -> Result<()> {
     Ok(())
 }
 
-/// Writes a file, whole or not at all: a new one beside it, then renamed.
+/// Writes a file, whole or not at all: a new one beside it, then renamed. A link stays a link, a
+/// file that may not be written stays as it is, and a device or pipe is written to directly.
 pub(crate) fn write(path: &Path, text: &str, force: bool) -> Result<()> {
-    let shown = path.display();
-    if !force && path.symlink_metadata().is_ok() {
+    let shown = path.display().to_string();
+    let linked = path.symlink_metadata().is_ok_and(|there| there.is_symlink());
+    let there = path.metadata().ok();
+    if there.as_ref().is_some_and(|there| there.is_dir()) {
+        anyhow::bail!("{shown} is a folder\n\ntry: a file name in it");
+    }
+    if there.as_ref().is_some_and(|there| !there.is_file()) {
+        return std::fs::OpenOptions::new()
+            .write(true)
+            .open(path)
+            .and_then(|mut device| device.write_all(text.as_bytes()))
+            .with_context(|| format!("cannot write {shown}"));
+    }
+    if !force && (there.is_some() || linked) {
         anyhow::bail!("{shown} is there already\n\ntry: --force, or another name");
     }
+    if there.is_some_and(|there| there.permissions().readonly()) {
+        anyhow::bail!("{shown} is write-protected\n\ntry: another name");
+    }
+    let target = if linked {
+        std::fs::canonicalize(path).with_context(|| format!("{shown} links to nothing"))?
+    } else {
+        path.to_path_buf()
+    };
+    let path = target.as_path();
     let folder = match path.parent() {
         Some(folder) if !folder.as_os_str().is_empty() => folder,
         _ => Path::new("."),

@@ -173,6 +173,20 @@ fn clean(text: String) -> String {
     }
 }
 
+/// A text safe to show on a terminal: control characters, escape sequences among them, written out
+/// (`\u{1b}`), what turns the direction of text left out; line ends and tabs stay.
+#[must_use]
+pub fn printable(text: &str) -> String {
+    text.chars()
+        .filter(|c| !turns(*c))
+        .map(|c| match c {
+            '\n' | '\t' => c.to_string(),
+            c if c.is_control() => c.escape_unicode().to_string(),
+            c => c.to_string(),
+        })
+        .collect()
+}
+
 /// A character that turns the direction of text: Unicode Bidirectional Algorithm, UAX #9.
 pub(super) const fn turns(c: char) -> bool {
     matches!(c, '\u{200e}' | '\u{200f}' | '\u{202a}'..='\u{202e}' | '\u{2066}'..='\u{2069}')

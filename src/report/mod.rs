@@ -25,7 +25,7 @@ pub use assessment::assessment;
 pub use card::{Card, card};
 pub use climate::{climate, climates};
 pub use compare::compare;
-pub use document::{Block, Document, Line, Span, Tone};
+pub use document::{Block, Document, Line, Span, Tone, printable};
 pub use fleet::{FLEET_HEADER, SweepRow, fleet, fleet_fault, fleet_row, sweep};
 pub use html::{card_lines, html, page};
 pub use keys::key_list;
