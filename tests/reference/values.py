@@ -442,7 +442,8 @@ def skin(at_film, density, oil_at, diameter, kv40, kv100, density_15):
 
     def over(ts):
         t = (ts + oil_at) / 2 if at_film else oil_at
-        return film(Nu_horizontal_cylinder_Churchill_Chu, oil, t, ts - oil_at, size) * (ts - oil_at) - density * 1e4
+        h = film(Nu_horizontal_cylinder_Churchill_Chu, oil, t, ts - oil_at, size)
+        return h * (ts - oil_at) - density * 1e4
 
     hottest = (400 + oil_at) / 2 if at_film else oil_at
     legal = all(on_line((40, kv40), (100, kv100), t) for t in (oil_at, hottest))
@@ -555,7 +556,8 @@ def night(rng):
           density_15=(600, 1500), night=night)
 def parked(parked, hours, ua, litres, density_15, night):
     kg = litres / 1000 * density_15
-    fall = lambda s, y: [-ua * max(y[0] - np.interp(s / 3600, range(25), night), 0) / (kg * cp(density_15, y[0]))]
+    over = lambda s, y: max(y[0] - np.interp(s / 3600, range(25), night), 0)
+    fall = lambda s, y: [-ua * over(s, y) / (kg * cp(density_15, y[0]))]
     way = solve_ivp(fall, (0, hours * 3600), [parked], rtol=1e-9, atol=1e-9, max_step=600)
     return float(way.y[0][-1])
 
