@@ -142,12 +142,12 @@ def saybolt(nu, fahrenheit):
     return Saybolt_universal_eq(nu) * (1 + 0.000061 * (fahrenheit - 100))
 
 
-@quantity(30, "chemicals", nu=log(1.8, 1e5), fahrenheit=(0, 250))
+@quantity(30, "chemicals, published factor", nu=log(1.8, 1e5), fahrenheit=(0, 250))
 def saybolt_seconds(nu, fahrenheit):
     return saybolt(nu, fahrenheit)
 
 
-@quantity(30, "chemicals", seconds=log(32.2, 4e5), fahrenheit=(0, 250))
+@quantity(30, "chemicals, published factor", seconds=log(32.2, 4e5), fahrenheit=(0, 250))
 def saybolt_viscosity(seconds, fahrenheit):
     over = lambda nu: saybolt(nu, fahrenheit) - seconds
     return brentq(over, 1.8, 1e6, xtol=1e-13) if over(1.8) < 0 else None
@@ -358,7 +358,7 @@ def nusselt_rod(ra, pr):
     return Nu_horizontal_cylinder_Churchill_Chu(Pr=pr, Gr=ra / pr)
 
 
-@quantity(15, "ht", re=log(1e3, 1e8), pr=(0.6, 1))
+@quantity(15, "ht, its 0.036 made 0.037", re=log(1e3, 1e8), pr=(0.6, 1))
 def nusselt_wind(re, pr):
     """The library's plate is averaged with 0.036; Incropera's with 0.037."""
     return Nu_horizontal_plate_turbulent_Kreith(Re=re, Pr=pr) * 0.037 / 0.036
