@@ -49,7 +49,8 @@ impl Air {
     ///
     /// # Source
     /// US Standard Atmosphere 1976 (memory): within 0.3 % (viscosity) and 1.1 % (conductivity) of a
-    /// reference equation of state at -10 °C.
+    /// reference equation of state at -10 °C; over the whole range within 1.3 % and 2.5 %, the Prandtl
+    /// number within 4.1 %.
     #[must_use]
     pub fn at(celsius: f64) -> Self {
         let t = celsius + 273.15;

@@ -1,12 +1,19 @@
-//! The whole assessment against a second implementation in Python on general-purpose libraries
-//! (`tests/reference/reference.py`, versions in its stored results): floors within 0.05 K, powers
-//! within 0.5 %.
+//! Single figures against general-purpose libraries (`tests/reference/values.py`), and the whole
+//! assessment against a second implementation in Python on them (`tests/reference/reference.py`):
+//! floors within 0.05 K, powers within 0.5 %. Versions are in the stored results.
+//!
+//! The table of deviations in the README is made here: `UPDATE=1 cargo test --test reference`.
 #![cfg(feature = "cli")]
 
 use coldsump::advice::{self, HeatingStatus};
 use coldsump::case::CaseFile;
 use coldsump::report;
 use serde_json::Value;
+
+#[path = "reference/values.rs"]
+mod values;
+
+use values::{Deviations, Scale};
 
 /// One comparison: where, found here, found there.
 struct Pair {
@@ -81,11 +88,6 @@ fn pairs(out: &mut Vec<Pair>, place: &str, here: &Value, there: &Value) {
     }
 }
 
-fn median(values: &mut [f64]) -> (f64, f64) {
-    values.sort_by(f64::total_cmp);
-    (values[values.len() / 2], values[values.len() - 1])
-}
-
 fn compare(path: &str) -> (usize, Spread) {
     let text = std::fs::read_to_string(path).unwrap();
     let stored: Value = serde_json::from_str(&text).unwrap();
@@ -123,11 +125,8 @@ fn compare(path: &str) -> (usize, Spread) {
 
 #[test]
 fn random_cases_agree() {
-    let (oils, mut spread) = compare("tests/reference/random-cases.json");
+    let (oils, spread) = compare("tests/reference/random-cases.json");
     assert!(oils >= 150, "{oils} oils");
-    let (kelvin, share) = (median(&mut spread.kelvin), median(&mut spread.share));
-    println!("{oils} oils; temperatures: median {:.1e} K, worst {:.1e} K", kelvin.0, kelvin.1);
-    println!("other figures: median {:.1e}, worst {:.1e} of the figure", share.0, share.1);
     let wrong = &spread.wrong;
     assert!(wrong.is_empty(), "{} differ:\n{}", wrong.len(), wrong.join("\n"));
 }
@@ -148,4 +147,45 @@ fn examples_agree() {
     let (oils, spread) = compare("tests/reference/examples.json");
     assert!(oils >= 5, "{oils} oils");
     assert!(spread.wrong.is_empty(), "{}", spread.wrong.join("\n"));
+}
+
+#[test]
+fn values_agree() {
+    let compared = values::compare();
+    let (count, wrong) = (compared.count(), &compared.wrong);
+    assert!(count >= 300, "{count} values");
+    assert!(wrong.is_empty(), "{} differ:\n{}", wrong.len(), wrong.join("\n"));
+}
+
+const START: &str = "<!-- deviations: made from tests/reference -->\n";
+const END: &str = "<!-- end of deviations -->";
+
+#[test]
+fn the_readme_tells_the_deviations() {
+    let compared = values::compare();
+    let (count, made) = (compared.count(), &compared.made);
+    let mut rows = compared.rows;
+    let (oils, spread) = compare("tests/reference/random-cases.json");
+    let whole = |what, scale, each| Deviations {
+        what,
+        against: "second implementation".to_owned(),
+        scale,
+        each,
+    };
+    rows.push(whole("whole cases: temperatures", Scale::Kelvin, spread.kelvin));
+    rows.push(whole("whole cases: other figures", Scale::Share, spread.share));
+    let mut wanted = format!(
+        "{count} single values over the whole legal range, and {oils} oils in random cases ({made}):\n\n\
+         | figure | values | against | median | worst |\n| --- | --- | --- | --- | --- |\n"
+    );
+    wanted.extend(rows.iter().map(Deviations::row));
+
+    let readme = std::fs::read_to_string("README.md").unwrap();
+    let (before, rest) = readme.split_once(START).unwrap();
+    let (held, after) = rest.split_once(END).unwrap();
+    if std::env::var_os("UPDATE").is_some() {
+        std::fs::write("README.md", format!("{before}{START}{wanted}{END}{after}")).unwrap();
+        return;
+    }
+    assert_eq!(held, wanted, "run `UPDATE=1 cargo test --test reference`");
 }
